@@ -1,0 +1,81 @@
+import { randomBytes } from 'node:crypto';
+import pg from 'pg';
+import { parseSecrets } from '#server/settings/settings';
+
+/** A database for one test file, on the throw-away cluster. */
+export interface TestDatabase {
+  /** The superuser's address: for setting up, and for looking behind the walls. */
+  adminUrl: string;
+  /** Ends whoever is still connected and removes the database. */
+  drop(): Promise<void>;
+}
+
+/** The key with which test servers encrypt; the same everywhere, so that servers of one database understand each other. */
+export const TEST_SECRET = `test:${'5e'.repeat(32)}`;
+
+const TEMPLATE = 'clamptide_template';
+/** One at a time makes the template, the others wait for it. */
+const TEMPLATE_LOCK = 7_301_102;
+
+function clusterUrl(): string {
+  const url = process.env['TEST_ADMIN_DATABASE_URL'];
+  if (!url) {
+    throw new Error(
+      'No test database: put this file where the projects "api", "migrations" or "browser" of test/vitest.config.ts find it.',
+    );
+  }
+  return url;
+}
+
+function urlOf(database: string): string {
+  const url = new URL(clusterUrl());
+  url.pathname = `/${database}`;
+  return url.href;
+}
+
+async function onCluster<T>(work: (client: pg.Client) => Promise<T>): Promise<T> {
+  const client = new pg.Client({ connectionString: clusterUrl() });
+  await client.connect();
+  try {
+    return await work(client);
+  } finally {
+    await client.end();
+  }
+}
+
+async function create(template: string | null): Promise<TestDatabase> {
+  const name = `test_${randomBytes(8).toString('hex')}`;
+  await onCluster((client) =>
+    client.query(`create database ${name}${template ? ` template ${template}` : ''}`),
+  );
+  return {
+    adminUrl: urlOf(name),
+    drop: () =>
+      onCluster(async (client) => {
+        await client.query(`drop database if exists ${name} with (force)`);
+      }),
+  };
+}
+
+/** An empty database. */
+export function freshDatabase(): Promise<TestDatabase> {
+  return create(null);
+}
+
+/** A database with roles and all migrations, cloned from one that is set up once a run. */
+export async function migratedDatabase(): Promise<TestDatabase> {
+  await onCluster(async (client) => {
+    await client.query('select pg_advisory_lock($1)', [TEMPLATE_LOCK]);
+    const { rowCount } = await client.query('select 1 from pg_database where datname = $1', [
+      TEMPLATE,
+    ]);
+    if (rowCount) return;
+    const making = `${TEMPLATE}_making`;
+    await client.query(`drop database if exists ${making} with (force)`);
+    await client.query(`create database ${making}`);
+    const { setUpDatabase } = await import('#server/db/setup');
+    await setUpDatabase(urlOf(making), parseSecrets(TEST_SECRET));
+    await client.query(`alter database ${making} rename to ${TEMPLATE}`);
+  });
+  return create(TEMPLATE);
+}

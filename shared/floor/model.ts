@@ -1,4 +1,5 @@
 import type { Instant } from '#shared/time/instant';
+import type { Role } from '#shared/members/permissions';
 import type { HoldKind, Place, Route } from '#shared/route/route';
 
 /**
@@ -116,7 +117,7 @@ export interface Hold {
 
 export type Shelf = 'READY' | 'WORKING' | 'HOLDING';
 
-export type Role = 'OWNER' | 'MAKER' | 'HELPER' | 'OFFICE' | 'INTEGRATOR';
+export type { Role } from '#shared/members/permissions';
 
 /** Who gives a command. */
 export interface Actor {

@@ -52,6 +52,7 @@ interface StepBase {
   /** Unique in the route. */
   key: string;
   stage: Stage;
+  /** The name after "start" and "finish": milling, 80 grit, taking clamps off. */
   name: string;
   scope: StepScope;
 }
@@ -59,6 +60,8 @@ interface StepBase {
 /** Work: needs people and perhaps a station, and advances only in working time. */
 export interface WorkStep extends StepBase {
   kind: 'WORK';
+  /** What one does, as in "2 to glue". */
+  verb: string;
   /** Working minutes before the first piece. */
   setupMinutes: number;
   /** Working minutes for each board (scope BATCH) or for the piece (other scopes). */
@@ -105,4 +108,11 @@ export function stagesOf(route: Route): Stage[] {
 /** The rank of a place, for comparing how far things are. */
 export function rankOf(place: Place): number {
   return PLACES.indexOf(place);
+}
+
+/** The step with the given key and its index, or null. */
+export function stepAt(route: Route, key: string): { step: RouteStep; index: number } | null {
+  const index = route.steps.findIndex((step) => step.key === key);
+  const step = route.steps[index];
+  return step ? { step, index } : null;
 }

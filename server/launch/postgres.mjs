@@ -32,23 +32,21 @@ async function installed() {
   return found.sort((a, b) => b.major - a.major);
 }
 
-/**
- * The programs of PostgreSQL: the newest, or those of the `major` version with which existing data were written.
- * Installs Debian's package where none is found and this process may.
- */
-export async function findPostgres(major = null) {
-  const pick = (all) => (major === null ? all[0] : all.find((one) => one.major === major));
-  const before = pick(await installed());
+/** The programs of the newest PostgreSQL here; Debian's package is installed when there is none and this process may. */
+export async function findPostgres() {
+  const [before] = await installed();
   if (before) return before;
-  const name = major === null ? 'postgresql' : `postgresql-${major}`;
-  const why =
-    major === null ? 'is not installed' : `${major}, which wrote these data, is not installed`;
-  await installPackages([name], `PostgreSQL ${why}`, keepFromMakingACluster);
-  const after = pick(await installed());
+  await installPackages(['postgresql'], 'PostgreSQL is not installed', keepFromMakingACluster);
+  const [after] = await installed();
   if (after) return after;
   throw new Stop(
-    `PostgreSQL ${why}, and Debian's package "${name}" did not bring version ${major ?? OLDEST}${major ? '' : ' or newer'}: install it by hand, or set DATABASE_URL to a server you have.`,
+    `Debian's package "postgresql" did not bring version ${OLDEST} or newer: install that by hand, or set DATABASE_URL to a server you have.`,
   );
+}
+
+/** The programs of one major version, or null when it is not on this machine. */
+export async function findPostgresOf(major) {
+  return (await installed()).find((one) => one.major === major) ?? null;
 }
 
 /** Installs Debian packages, or stops with the one command that does. */

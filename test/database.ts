@@ -45,9 +45,10 @@ async function onCluster<T>(work: (client: pg.Client) => Promise<T>): Promise<T>
 
 async function create(template: string | null): Promise<TestDatabase> {
   const name = `test_${randomBytes(8).toString('hex')}`;
-  await onCluster((client) =>
-    client.query(`create database ${name}${template ? ` template ${template}` : ''}`),
-  );
+  await onCluster(async (client) => {
+    await client.query(`create database ${name}${template ? ` template ${template}` : ''}`);
+    if (template) await copyRights(client, template, name);
+  });
   return {
     adminUrl: urlOf(name),
     drop: () =>
@@ -55,6 +56,17 @@ async function create(template: string | null): Promise<TestDatabase> {
         await client.query(`drop database if exists ${name} with (force)`);
       }),
   };
+}
+
+/** A clone has its template's contents, but not the rights that were given on the database itself. */
+async function copyRights(client: pg.Client, from: string, to: string): Promise<void> {
+  const { rows } = await client.query<{ grant: string }>(
+    `select format('grant %s on database %I to %I', privilege_type, $2::text, grantee::regrole) as grant
+       from pg_database, aclexplode(datacl)
+      where datname = $1 and grantee not in (0, datdba)`,
+    [from, to],
+  );
+  for (const row of rows) await client.query(row.grant);
 }
 
 /** An empty database. */

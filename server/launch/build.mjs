@@ -14,17 +14,18 @@ const WEB = ['apps/web', 'shared', 'schema', 'package-lock.json', 'angular.json'
 const SERVER = ['server', 'shared', 'drizzle', 'package-lock.json', 'tsconfig.json'];
 
 /**
- * Builds what is stale into `dist` (below the root): `web`, the app as the browser gets it, and `server`, one file an entry.
- * Answers which of the two were built.
+ * Builds what is stale into dist/: `web`, the app as the browser gets it, and `server`, one file an entry; both names with
+ * `prefix` before them. Answers which of the two were built.
  */
-export async function buildWhenStale(dist) {
-  await mkdir(path.join(root, dist), { recursive: true });
+export async function buildWhenStale(prefix = '') {
+  const dist = path.join(root, 'dist');
+  await mkdir(dist, { recursive: true });
   const work = async () => ({
-    web: await buildPart(path.join(root, dist, 'web'), WEB, 'the web app', buildWeb),
-    server: await buildPart(path.join(root, dist, 'server'), SERVER, 'the server', buildServer),
+    web: await buildPart(path.join(dist, `${prefix}web`), WEB, 'the web app', buildWeb),
+    server: await buildPart(path.join(dist, `${prefix}server`), SERVER, 'the server', buildServer),
   });
   // One lock for all of dist/: two builds at once would fight over the build cache.
-  const lock = path.join(root, 'dist', 'build.lock');
+  const lock = path.join(dist, 'build.lock');
   return withLock(lock, work, () => say('Waiting for another build to end ...'));
 }
 

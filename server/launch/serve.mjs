@@ -1,4 +1,5 @@
 import { spawn } from 'node:child_process';
+import { root } from './root.mjs';
 import { SETUP_EXIT_CODE, Stop } from './stop.mjs';
 
 /** The server has 25 s to end what it does; after this it is ended. */
@@ -13,6 +14,7 @@ const CAP_MS = 28_000;
  */
 export function serve(args, env) {
   const child = spawn(process.execPath, args, {
+    cwd: root,
     env: { ...process.env, ...env },
     stdio: ['ignore', 'inherit', 'inherit', 'ipc'],
     detached: true,

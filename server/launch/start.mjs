@@ -14,7 +14,7 @@ await launch(async (asked) => {
   const started = Date.now();
   await installPackagesWhenStale();
   const env = await prepareData();
-  await buildWhenStale('dist');
+  await buildWhenStale();
   if (process.argv.includes('--demo-fresh')) env.CLAMPTIDE_DEMO_FRESH = '1';
   const server = serve(['--enable-source-maps', 'dist/server/main.mjs'], env);
   atEnd(server.stop);

@@ -1,15 +1,13 @@
 import { buildWhenStale } from '../../server/launch/build.mjs';
+import { TEST_BUILD } from '../test-build.mjs';
 import { angularSpecs } from './angular-specs.mjs';
 import { generated } from './generated.mjs';
 import { lock } from './lock.mjs';
 import { runVitest } from './run-vitest.mjs';
 import { format, lint, types } from './static.mjs';
 
-/** Tests build into a folder of their own, so that a running server keeps its files. */
-export const TEST_DIST = 'dist/test';
-
 async function build() {
-  const built = await buildWhenStale(TEST_DIST);
+  const built = await buildWhenStale(TEST_BUILD);
   const reused = Object.entries(built).flatMap(([part, fresh]) => (fresh ? [] : [part]));
   return {
     passed: 1,

@@ -46,9 +46,9 @@ export class Session {
     }
   }
 
-  /** Takes the person that a sign-in answered with. */
-  enter(viewer: ViewerFieldsFragment): void {
-    this.known.set(viewer);
+  /** Asks again, as after signing in. */
+  async renew(): Promise<void> {
+    await this.ask();
   }
 
   async signOut(): Promise<void> {

@@ -1,8 +1,72 @@
-import { ChangeDetectionStrategy, Component } from '@angular/core';
+import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
+import { Router, RouterLink } from '@angular/router';
+import { Apollo } from 'apollo-angular';
+import { firstValueFrom } from 'rxjs';
+import { SignUpDocument, type SignUpInput } from '../graphql/generated/graphql';
+import { failureSentence } from '../ui/failure-sentence';
+import { has, ProblemList, type FormProblem } from '../ui/problem-list';
+import { EntryFrame } from './entry-frame';
+import { Session } from './session';
+import { browserZone, zones } from './zones';
+
+const FIELDS = ['shopName', 'zone', 'name', 'email', 'password'] as const;
+const SHORTEST_PASSWORD = 8;
 
 @Component({
   selector: 'app-sign-up-page',
-  template: '<h1>Sign up</h1>',
+  imports: [EntryFrame, ProblemList, RouterLink],
+  templateUrl: './sign-up-page.html',
+  styleUrl: './entry-form.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
-export class SignUpPage {}
+export class SignUpPage {
+  private readonly apollo = inject(Apollo);
+  private readonly router = inject(Router);
+  private readonly session = inject(Session);
+
+  protected readonly fields = FIELDS;
+  protected readonly zones = zones();
+  protected readonly zone = browserZone();
+  protected readonly busy = signal(false);
+  protected readonly problems = signal<readonly FormProblem[]>([]);
+  protected readonly has = has;
+
+  protected async signUp(event: Event, input: SignUpInput): Promise<void> {
+    event.preventDefault();
+    if (this.busy()) return;
+    const wrong = wrongFields(input);
+    this.problems.set(wrong);
+    if (wrong.length > 0) return;
+    this.busy.set(true);
+    try {
+      const { data } = await firstValueFrom(
+        this.apollo.mutate({ mutation: SignUpDocument, variables: { input } }),
+      );
+      if (data?.signUp.viewer) {
+        await this.session.renew();
+        await this.router.navigateByUrl('/');
+      } else {
+        this.problems.set(data?.signUp.problems ?? []);
+      }
+    } catch (error) {
+      this.problems.set([{ field: null, sentence: failureSentence(error) }]);
+    } finally {
+      this.busy.set(false);
+    }
+  }
+}
+
+function wrongFields(input: SignUpInput): FormProblem[] {
+  const problems: FormProblem[] = [];
+  if (input.shopName.trim() === '') {
+    problems.push({ field: 'shopName', sentence: 'Give the shop a name.' });
+  }
+  if (input.name.trim() === '') problems.push({ field: 'name', sentence: 'Enter your name.' });
+  if (!/^\S+@\S+$/.test(input.email.trim())) {
+    problems.push({ field: 'email', sentence: 'Enter your e-mail address, with an @ in it.' });
+  }
+  if (input.password.length < SHORTEST_PASSWORD) {
+    problems.push({ field: 'password', sentence: 'Use at least 8 characters.' });
+  }
+  return problems;
+}

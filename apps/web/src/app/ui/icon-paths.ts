@@ -1,0 +1,36 @@
+/** Strokes on a 24 by 24 grid, two units wide, drawn for this product. */
+export const ICON_PATHS = {
+  floor: 'M4 4h4v16H4zM10 4h4v10h-4zM16 4h4v7h-4z',
+  orders: 'M6 3h12v18l-3-2-3 2-3-2-3 2zM9 8h6M9 12h6',
+  designs: 'M4 4h8v8H4zM12 12h8v8h-8zM12 4h8v8M4 12v8h8',
+  plan: 'M3 6h9M8 12h9M12 18h9M6 3v18',
+  api: 'M8 7l-5 5 5 5M16 7l5 5-5 5M14 4l-4 16',
+  settings: 'M4 7h9M17 7h3M4 17h3M11 17h9M15 5v4M9 15v4',
+  screen: 'M3 5h18v11H3zM8 20h8M12 16v4',
+  person: 'M12 11a4 4 0 1 0 0-8 4 4 0 0 0 0 8zM4 21c1-5 4-7 8-7s7 2 8 7',
+  more: 'M12 5v.01M12 12v.01M12 19v.01',
+  menu: 'M4 6h16M4 12h16M4 18h16',
+  down: 'M6 9l6 6 6-6',
+  left: 'M15 6l-6 6 6 6',
+  right: 'M9 6l6 6-6 6',
+  check: 'M5 13l4 4L19 7',
+  close: 'M6 6l12 12M18 6L6 18',
+  plus: 'M12 5v14M5 12h14',
+  minus: 'M5 12h14',
+  undo: 'M8 5L4 9l4 4M4 9h10a6 6 0 0 1 0 12H9',
+  warning: 'M12 4l9 16H3zM12 10v5M12 17.5v.01',
+  info: 'M12 21a9 9 0 1 0 0-18 9 9 0 0 0 0 18zM12 11v5M12 8v.01',
+  lock: 'M6 11h12v9H6zM9 11V8a3 3 0 0 1 6 0v3',
+  clock: 'M12 21a9 9 0 1 0 0-18 9 9 0 0 0 0 18zM12 7v5l3 2',
+  offline:
+    'M4 4l16 16M8.5 15a5 5 0 0 1 7 0M5 11.500a10 10 0 0 1 4-2.400M19 11.500a10 10 0 0 0-5-2.700M12 19v.01',
+  clamp: 'M5 4h5v16H5M19 9h-5v6h5M10 12h4M19 6v12',
+  grip: 'M9 6v.01M15 6v.01M9 12v.01M15 12v.01M9 18v.01M15 18v.01',
+  copy: 'M8 8h12v12H8zM16 8V4H4v12h4',
+  sun: 'M12 16a4 4 0 1 0 0-8 4 4 0 0 0 0 8zM12 2v2M12 20v2M2 12h2M20 12h2M5 5l1.500 1.500M17.500 17.500L19 19M19 5l-1.500 1.500M6.500 17.500L5 19',
+  moon: 'M20 14A8 8 0 0 1 10 4a8 8 0 1 0 10 10z',
+  exit: 'M10 4H5v16h5M14 8l4 4-4 4M18 12H9',
+  filter: 'M4 5h16l-6 8v6l-4-2v-4z',
+} as const;
+
+export type IconName = keyof typeof ICON_PATHS;

@@ -1,6 +1,7 @@
 import { randomBytes } from 'node:crypto';
 import pg from 'pg';
 import { parseSecrets } from '#server/settings/settings';
+import { TEST_SECRET } from './test-settings.mjs';
 
 /** A database for one test file, on the throw-away cluster. */
 export interface TestDatabase {
@@ -10,12 +11,10 @@ export interface TestDatabase {
   drop(): Promise<void>;
 }
 
-/** The key with which test servers encrypt; the same everywhere, so that servers of one database understand each other. */
-export const TEST_SECRET = `test:${'5e'.repeat(32)}`;
-
 const TEMPLATE = 'clamptide_template';
 /** One at a time makes the template, the others wait for it. */
 const TEMPLATE_LOCK = 7_301_102;
+const SETUP_LOCK = 7_301_103;
 
 function clusterUrl(): string {
   const url = process.env['TEST_ADMIN_DATABASE_URL'];
@@ -33,6 +32,7 @@ function urlOf(database: string): string {
   return url.href;
 }
 
+/** Runs work on the cluster's own database. */
 async function onCluster<T>(work: (client: pg.Client) => Promise<T>): Promise<T> {
   const client = new pg.Client({ connectionString: clusterUrl() });
   await client.connect();
@@ -74,6 +74,16 @@ export function freshDatabase(): Promise<TestDatabase> {
   return create(null);
 }
 
+/** Makes the roles and migrates, as a server does at its start. */
+export async function setUp(adminUrl: string): Promise<void> {
+  const { setUpDatabase } = await import('#server/db/setup');
+  await onCluster(async (client) => {
+    // Roles belong to the whole cluster, and an advisory lock to one database: tests that run side by side share this one.
+    await client.query('select pg_advisory_lock($1)', [SETUP_LOCK]);
+    await setUpDatabase(adminUrl, parseSecrets(TEST_SECRET));
+  });
+}
+
 /** A database with roles and all migrations, cloned from one that is set up once a run. */
 export async function migratedDatabase(): Promise<TestDatabase> {
   await onCluster(async (client) => {
@@ -85,8 +95,7 @@ export async function migratedDatabase(): Promise<TestDatabase> {
     const making = `${TEMPLATE}_making`;
     await client.query(`drop database if exists ${making} with (force)`);
     await client.query(`create database ${making}`);
-    const { setUpDatabase } = await import('#server/db/setup');
-    await setUpDatabase(urlOf(making), parseSecrets(TEST_SECRET));
+    await setUp(urlOf(making));
     await client.query(`alter database ${making} rename to ${TEMPLATE}`);
   });
   return create(TEMPLATE);

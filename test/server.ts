@@ -6,8 +6,7 @@ import { buildWhenStale } from '../server/launch/build.mjs';
 import { freePort } from '../server/launch/free-port.mjs';
 import { root } from '../server/launch/root.mjs';
 import { serve } from '../server/launch/serve.mjs';
-import { TEST_SECRET } from './database';
-import { TEST_BUILD } from './test-build.mjs';
+import { TEST_BUILD, TEST_SECRET } from './test-settings.mjs';
 
 /** A server process of its own, as `npm start` would run it. */
 export interface TestServer {

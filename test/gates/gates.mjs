@@ -1,5 +1,5 @@
 import { buildWhenStale } from '../../server/launch/build.mjs';
-import { TEST_BUILD } from '../test-build.mjs';
+import { TEST_BUILD } from '../test-settings.mjs';
 import { angularSpecs } from './angular-specs.mjs';
 import { generated } from './generated.mjs';
 import { lock } from './lock.mjs';

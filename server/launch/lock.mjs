@@ -1,3 +1,4 @@
+import { randomBytes } from 'node:crypto';
 import { link, readFile, rename, rm, writeFile } from 'node:fs/promises';
 import { setTimeout as wait } from 'node:timers/promises';
 
@@ -25,7 +26,7 @@ const isHeld = async (text) => (await identify(Number.parseInt(text, 10))) === t
  */
 export async function takeLock(file) {
   const mine = await identify(process.pid);
-  const draft = `${file}.${process.pid}`;
+  const draft = `${file}.${randomBytes(6).toString('hex')}`;
   await writeFile(draft, mine);
   try {
     for (let attempt = 0; attempt < 20; attempt += 1) {

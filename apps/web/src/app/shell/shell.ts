@@ -46,7 +46,7 @@ export class Shell {
   );
 
   constructor() {
-    if (this.session.may('seeFloor') || this.session.may('seeOrders')) inject(LiveFeed).keep();
+    if (this.session.may('seeFloor')) inject(LiveFeed).keep();
     // Another page begins at its top for whoever does not see it, too; a filter in the address does not.
     inject(Router)
       .events.pipe(

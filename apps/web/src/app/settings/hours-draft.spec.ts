@@ -1,4 +1,11 @@
-import { hoursRows, readHours, timeText, type HoursRows, type SpanRow } from './hours-draft';
+import {
+  hoursRows,
+  readHours,
+  readMinute,
+  timeText,
+  type HoursRows,
+  type SpanRow,
+} from './hours-draft';
 
 const HOURS = {
   weekly: [
@@ -36,12 +43,24 @@ describe('the hours form', () => {
     expect(readHours(rows, typed(rows))).toEqual({ ...HOURS, problems: [] });
   });
 
-  it('writes the end of the day as midnight and reads midnight as an end only at the end', () => {
-    expect(timeText(1_440)).toBe('00:00');
-    const rows = hoursRows(HOURS, 0);
-    const draft = readHours(rows, typed(rows, { 'from-0-0-0': '00:00' }));
-    expect(draft.weekly[0]?.[0]?.fromMinute).toBe(0);
-    expect(draft.weekly[0]?.[1]?.toMinute).toBe(1_440);
+  it('writes and reads the end of the day as 24:00', () => {
+    expect(timeText(1_440)).toBe('24:00');
+    expect(timeText(485)).toBe('08:05');
+    expect(readMinute('24:00')).toBe(1_440);
+  });
+
+  it.each([
+    ['8', 480],
+    ['8:05', 485],
+    [' 08.30 ', 510],
+    ['0800', 480],
+    ['0', 0],
+  ])('reads %s as people type it', (text, minute) => {
+    expect(readMinute(text)).toBe(minute);
+  });
+
+  it.each(['', '25', '24:01', '8:60', '8:5', 'noon', '-1', '8:00 AM'])('refuses %s', (text) => {
+    expect(readMinute(text)).toBeNull();
   });
 
   it('asks for times and dates that are missing, beside their fields', () => {

@@ -67,8 +67,8 @@ export function readHours(rows: HoursRows, read: (name: string) => string): Hour
   const problems: FormProblem[] = [];
   const spans = (list: readonly SpanRow[], path: string): Span[] =>
     list.map((row, index) => ({
-      fromMinute: readTime(read(`from-${row.id}`), false, `${path}.${index}.fromMinute`, problems),
-      toMinute: readTime(read(`to-${row.id}`), true, `${path}.${index}.toMinute`, problems),
+      fromMinute: readTime(read(`from-${row.id}`), `${path}.${index}.fromMinute`, problems),
+      toMinute: readTime(read(`to-${row.id}`), `${path}.${index}.toMinute`, problems),
     }));
   return {
     weekly: rows.weekly.map((list, day) => spans(list, `weekly.${day}`)),
@@ -88,10 +88,19 @@ export function readHours(rows: HoursRows, read: (name: string) => string): Hour
   };
 }
 
-/** `08:00`; the day's end, minute 1440, is `00:00`, as a time input has no 24:00. */
+/** `08:00`; the end of the day is `24:00`. */
 export function timeText(minute: number): string {
-  const of = minute % 1_440;
-  return `${String(Math.floor(of / 60)).padStart(2, '0')}:${String(of % 60).padStart(2, '0')}`;
+  const two = (count: number): string => String(count).padStart(2, '0');
+  return `${two(Math.floor(minute / 60))}:${two(minute % 60)}`;
+}
+
+/** The minute of the day for `8`, `8:00`, `08.00`, `0800` or `24:00`; null for anything else. */
+export function readMinute(text: string): number | null {
+  const parts = /^(\d{1,2})(?:[:.h]?(\d{2}))?$/.exec(text.trim());
+  if (!parts) return null;
+  const [hours, minutes] = [Number(parts[1]), Number(parts[2] ?? 0)];
+  const minute = hours * 60 + minutes;
+  return minutes < 60 && minute <= 1_440 ? minute : null;
 }
 
 function spanRows(spans: readonly Span[], prefix: string): SpanRow[] {
@@ -102,14 +111,10 @@ function spanRows(spans: readonly Span[], prefix: string): SpanRow[] {
   }));
 }
 
-function readTime(text: string, isEnd: boolean, field: string, problems: FormProblem[]): number {
-  const parts = /^(\d{2}):(\d{2})/.exec(text);
-  if (!parts) {
-    problems.push({ field, sentence: 'Enter a time, such as 08:00.' });
-    return 0;
-  }
-  const minute = Number(parts[1]) * 60 + Number(parts[2]);
-  return isEnd && minute === 0 ? 1_440 : minute;
+function readTime(text: string, field: string, problems: FormProblem[]): number {
+  const minute = readMinute(text);
+  if (minute === null) problems.push({ field, sentence: 'Enter a time, such as 08:00.' });
+  return minute ?? 0;
 }
 
 /** Every field that has a place of its own on the form. */

@@ -13,7 +13,10 @@ import type { SpanRow } from './hours-draft';
       <div class="span">
         <input
           class="ct-input"
-          type="time"
+          inputmode="numeric"
+          maxlength="6"
+          autocomplete="off"
+          placeholder="00:00"
           [name]="'from-' + span.id"
           [attr.value]="span.from"
           [attr.aria-label]="day() + ', span ' + (index + 1) + ', from'"
@@ -23,7 +26,10 @@ import type { SpanRow } from './hours-draft';
         <span aria-hidden="true">to</span>
         <input
           class="ct-input"
-          type="time"
+          inputmode="numeric"
+          maxlength="6"
+          autocomplete="off"
+          placeholder="00:00"
           [name]="'to-' + span.id"
           [attr.value]="span.to"
           [attr.aria-label]="day() + ', span ' + (index + 1) + ', to'"
@@ -70,7 +76,8 @@ import type { SpanRow } from './hours-draft';
       gap: 6px;
     }
     .ct-input {
-      width: 116px;
+      width: 80px;
+      text-align: center;
     }
     .problems:not(:has(p)) {
       display: none;

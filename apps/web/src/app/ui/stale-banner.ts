@@ -5,7 +5,7 @@ import { Session } from '../session/session';
 import { Icon } from './icon';
 import { ago, clockTime } from './when';
 
-/** While the line is down: how old everything on the page is, and what happens with what one does meanwhile. */
+/** While the line is down: how old everything on the page is. */
 @Component({
   selector: 'app-stale-banner',
   imports: [Icon],
@@ -40,6 +40,7 @@ export class StaleBanner {
     const since = this.feed.since();
     if (this.feed.state() !== 'offline' || since === null) return null;
     const clock = clockTime(since, this.session.zone());
-    return `No connection. What you see is from ${clock}, ${ago(since, this.clock.minute())}. Changes cannot be made until the line is back.`;
+    const age = ago(since, this.clock.minute());
+    return `No live connection since ${clock}, ${age}. What you see may have changed since then.`;
   });
 }

@@ -1,4 +1,4 @@
-import { Injectable, inject, signal } from '@angular/core';
+import { inject, Injectable, InjectionToken, signal } from '@angular/core';
 import { Apollo } from 'apollo-angular';
 import { print } from 'graphql/language/printer';
 import type { Client } from 'graphql-ws';
@@ -7,12 +7,22 @@ import { Bearer } from './bearer';
 import { follow, type Following } from './follow';
 import { FloorChangesDocument, ViewerDocument } from './generated/graphql';
 import type { FloorChangesSubscription } from './generated/graphql';
+import type { SocketEvents } from './live-socket';
 import { LostSession } from './lost-session';
 import { ServerClock } from './server-clock';
 
 export type FloorChange = FloorChangesSubscription['floorChanges'];
 /** `off`: nobody follows, because nobody asked or because this person may not. */
 export type LiveState = 'off' | 'connected' | 'catching-up' | 'offline';
+
+/** Opens the socket. Its script is fetched only now: signing in needs none of it. */
+export const OPEN_SOCKET = new InjectionToken<(events: SocketEvents) => Promise<Client>>(
+  'OPEN_SOCKET',
+  {
+    providedIn: 'root',
+    factory: () => async (events) => (await import('./live-socket')).openSocket(events),
+  },
+);
 
 /** Milliseconds of silence after which a fresh connection counts as caught up: what was missed comes at once. */
 const SETTLED_AFTER = 400;
@@ -32,6 +42,7 @@ export class LiveFeed {
   private readonly bearer = inject(Bearer);
   private readonly clock = inject(ServerClock);
   private readonly lostSession = inject(LostSession);
+  private readonly openSocket = inject(OPEN_SOCKET);
 
   private readonly stateNow = signal<LiveState>('off');
   private readonly sinceNow = signal<number | null>(null);
@@ -110,9 +121,8 @@ export class LiveFeed {
     before?.stop();
   }
 
-  private async open(): Promise<Client> {
-    const { openSocket } = await import('./live-socket');
-    return openSocket({
+  private open(): Promise<Client> {
+    return this.openSocket({
       params: () => {
         const token = this.bearer.token();
         return token ? { authorization: `Bearer ${token}` } : {};

@@ -1,0 +1,74 @@
+import type { OrderStatus, Place } from '../graphql/generated/graphql';
+
+/** In the order in which an order goes through them. */
+export const STATUSES: readonly OrderStatus[] = [
+  'RECEIVED',
+  'PLANNED',
+  'IN_WORK',
+  'READY',
+  'SHIPPED',
+];
+
+export function statusName(status: OrderStatus): string {
+  switch (status) {
+    case 'RECEIVED':
+      return 'received';
+    case 'PLANNED':
+      return 'planned';
+    case 'IN_WORK':
+      return 'in work';
+    case 'READY':
+      return 'ready';
+    case 'SHIPPED':
+      return 'shipped';
+  }
+}
+
+/** What the status means, for whoever asks. */
+export function statusMeaning(status: OrderStatus): string {
+  switch (status) {
+    case 'RECEIVED':
+      return 'No batch makes it yet.';
+    case 'PLANNED':
+      return 'Its batches wait in the queue.';
+    case 'IN_WORK':
+      return 'At least one of its batches is on the floor.';
+    case 'READY':
+      return 'All its boards are ready.';
+    case 'SHIPPED':
+      return 'All its boards have left the shop.';
+  }
+}
+
+/** The stage that a line or an order stands in; "no batch yet" when nothing makes it. */
+export function stageName(stage: Place | null): string {
+  switch (stage) {
+    case null:
+      return 'no batch yet';
+    case 'QUEUED':
+      return 'queued';
+    case 'BLANK':
+      return 'blank';
+    case 'FIRST_GLUE_UP':
+      return 'first glue-up';
+    case 'SLICE':
+      return 'slice';
+    case 'SECOND_GLUE_UP':
+      return 'second glue-up';
+    case 'SURFACE':
+      return 'surface';
+    case 'SAND':
+      return 'sand';
+    case 'FINISH':
+      return 'finish';
+    case 'READY':
+      return 'ready';
+    case 'SHIPPED':
+      return 'shipped';
+  }
+}
+
+/** "1 board", "12 boards" */
+export function boardCount(count: number): string {
+  return count === 1 ? '1 board' : `${count} boards`;
+}

@@ -44,6 +44,8 @@ async function prepare(chosen) {
     const cluster = await startThrowAway();
     endDatabase = cluster.end;
     process.env.TEST_ADMIN_DATABASE_URL = cluster.url;
+    // What an interrupted test leaves about, clusters of its own included, goes with the folder.
+    process.env.TMPDIR = cluster.folder;
   }
 }
 

@@ -14,9 +14,12 @@ await launch(async (asked) => {
   const started = Date.now();
   await installPackagesWhenStale();
   const env = await prepareData();
-  await buildWhenStale();
+  // Tests start a build of their own, beside a server that runs meanwhile.
+  const prefix = process.env.CLAMPTIDE_BUILD ?? '';
+  await buildWhenStale(prefix);
+  env.CLAMPTIDE_WEB = `dist/${prefix}web`;
   if (process.argv.includes('--demo-fresh')) env.CLAMPTIDE_DEMO_FRESH = '1';
-  const server = serve(['--enable-source-maps', 'dist/server/main.mjs'], env);
+  const server = serve(['--enable-source-maps', `dist/${prefix}server/main.mjs`], env);
   atEnd(server.stop);
   const url = await Promise.race([server.ready, asked]);
   if (url) {

@@ -35,7 +35,10 @@ export default defineConfig({
         },
       },
       { extends: true, test: { name: 'outside', include: ['test/outside/**/*.spec.ts'] } },
-      { extends: true, test: { name: 'tidy', include: ['test/tidy/**/*.spec.ts'] } },
+      {
+        extends: true,
+        test: { name: 'tidy', include: ['test/tidy/**/*.spec.ts', 'test/gates/**/*.spec.ts'] },
+      },
       {
         extends: true,
         test: {

@@ -1,5 +1,6 @@
 import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
 import { Router, RouterLink } from '@angular/router';
+import { signUpSchema } from '#shared/session/sign-up-schema';
 import { Apollo } from 'apollo-angular';
 import { firstValueFrom } from 'rxjs';
 import { SignUpDocument, type SignUpInput } from '../graphql/generated/graphql';
@@ -10,7 +11,6 @@ import { Session } from './session';
 import { browserZone, zones } from './zones';
 
 const FIELDS = ['shopName', 'zone', 'name', 'email', 'password'] as const;
-const SHORTEST_PASSWORD = 8;
 
 @Component({
   selector: 'app-sign-up-page',
@@ -57,16 +57,9 @@ export class SignUpPage {
 }
 
 function wrongFields(input: SignUpInput): FormProblem[] {
-  const problems: FormProblem[] = [];
-  if (input.shopName.trim() === '') {
-    problems.push({ field: 'shopName', sentence: 'Give the shop a name.' });
-  }
-  if (input.name.trim() === '') problems.push({ field: 'name', sentence: 'Enter your name.' });
-  if (!/^\S+@\S+$/.test(input.email.trim())) {
-    problems.push({ field: 'email', sentence: 'Enter your e-mail address, with an @ in it.' });
-  }
-  if (input.password.length < SHORTEST_PASSWORD) {
-    problems.push({ field: 'password', sentence: 'Use at least 8 characters.' });
-  }
-  return problems;
+  const parsed = signUpSchema.safeParse(input);
+  return (parsed.error?.issues ?? []).map((issue) => ({
+    field: issue.path.map(String).join('.') || null,
+    sentence: issue.message,
+  }));
 }

@@ -14,6 +14,7 @@ import { SetHoursDocument, type SettingsQuery } from '../graphql/generated/graph
 import { failureSentence } from '../ui/failure-sentence';
 import { Icon } from '../ui/icon';
 import { has, ProblemList } from '../ui/problem-list';
+import { checkHours, onForm } from './check-hours';
 import { nextBasis } from './basis';
 import { addException, addSpan, removeException, removeSpan } from './hours-rows';
 import { DAYS, hoursFields, hoursRows, readHours, type HoursRows } from './hours-draft';
@@ -83,9 +84,9 @@ export class HoursForm {
     event.preventDefault();
     if (this.busy()) return;
     const form = new FormData(event.target as HTMLFormElement);
-    const { weekly, exceptions, problems } = readHours(this.rows(), (name) =>
-      String(form.get(name) ?? ''),
-    );
+    const draft = readHours(this.rows(), (name) => String(form.get(name) ?? ''));
+    const { weekly, exceptions } = draft;
+    const problems = draft.problems.length > 0 ? draft.problems : checkHours(weekly, exceptions);
     this.told.set({ problems });
     if (problems.length > 0) return;
     this.busy.set(true);
@@ -101,7 +102,7 @@ export class HoursForm {
       } else {
         const refused = answer?.problems ?? [];
         const newer = isConflict(refused) ? (answer?.shop ?? null) : null;
-        this.told.set({ problems: underRoot(refused, 'hours'), newer });
+        this.told.set({ problems: onForm(underRoot(refused, 'hours')), newer });
       }
     } catch (error) {
       this.told.set({ problems: [{ field: null, sentence: failureSentence(error) }] });

@@ -51,8 +51,8 @@ export async function initCluster(folder, postgres, password, { throwAway = fals
 }
 
 /** Recognises in PostgreSQL's words what a person can mend. */
-function setUpProblem(output, folder) {
-  if (/No space left on device|Disk quota exceeded/i.test(output)) {
+export function setUpProblem(output, folder) {
+  if (/No space left on device|Disk quota exceeded|Check free disk space/i.test(output)) {
     return new Stop(
       `The disk that holds ${folder} is full: free some space and start again; no data was harmed.`,
     );

@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { and, eq, inArray, sql } from 'drizzle-orm';
-import { board, batch, routeCopy } from '#drizzle/tables/batch';
+import { board, batch } from '#drizzle/tables/batch';
 import { idempotencyKey } from '#drizzle/tables/access';
 import { design } from '#drizzle/tables/design';
 import { lineBatch, orderLine, shopOrder } from '#drizzle/tables/order';
@@ -20,6 +20,7 @@ import type { BatchPayload, CreateBatchInput } from '#server/generated/schema';
 import { memberOf, type Context } from '#server/http/context';
 import { localId } from '#server/http/global-id';
 import { inputProblems, problem, type Problem } from '#server/http/problem';
+import { copyRoute } from './copy-route';
 
 /** What a new batch is made from, once every id and figure was read. */
 interface NewBatch {
@@ -239,25 +240,6 @@ async function routeSteps(
   );
   if (!glue || !finish) throw new Error('The shop has no usual glue or finish.');
   return resolveRoute(template, glue, finish);
-}
-
-/** The id of a copy of the steps. Batches whose copies are the same share one, as it never changes. */
-async function copyRoute(
-  tx: ShopTransaction,
-  shopId: string,
-  steps: RouteStep[],
-): Promise<string> {
-  const hash = createHash('sha256').update(JSON.stringify(steps)).digest('hex');
-  await tx
-    .insert(routeCopy)
-    .values({ shopId, id: newId(), hash, steps })
-    .onConflictDoNothing({ target: [routeCopy.shopId, routeCopy.hash] });
-  const [copy] = await tx
-    .select({ id: routeCopy.id })
-    .from(routeCopy)
-    .where(eq(routeCopy.hash, hash));
-  if (!copy) throw new Error('The route was not copied.');
-  return copy.id;
 }
 
 function refused(problems: Problem[]): BatchPayload {

@@ -41,9 +41,7 @@ export function batchHistory(
       .select({ event, name: member.name })
       .from(event)
       .leftJoin(member, eq(member.id, event.by))
-      .where(
-        and(eq(event.batchId, batchId), before === null ? undefined : lt(event.seq, before)),
-      )
+      .where(and(eq(event.batchId, batchId), before === null ? undefined : lt(event.seq, before)))
       .orderBy(desc(event.seq))
       .limit(size + 1);
     const page = rows.slice(0, size);

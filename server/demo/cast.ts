@@ -1,3 +1,4 @@
+import type { SpeciesKey } from '#shared/designs/species';
 import type { Role } from '#shared/members/permissions';
 
 /* The demo workshop. It and its people are invented; their addresses end in example.com. */
@@ -12,14 +13,15 @@ export interface DemoPerson {
   skills: string[];
 }
 
-const [ines, olle, mika, pia] = [
-  {
-    name: 'Ines Rothe',
-    initials: 'IR',
-    email: 'ines@example.com',
-    roles: ['OWNER', 'MAKER'],
-    skills: ['machining', 'gluing', 'sanding', 'finishing'],
-  },
+export const DEMO_OWNER: DemoPerson = {
+  name: 'Ines Rothe',
+  initials: 'IR',
+  email: 'ines@example.com',
+  roles: ['OWNER', 'MAKER'],
+  skills: ['machining', 'gluing', 'sanding', 'finishing'],
+};
+
+export const DEMO_OTHERS: readonly DemoPerson[] = [
   {
     name: 'Olle Lindqvist',
     initials: 'OL',
@@ -41,17 +43,14 @@ const [ines, olle, mika, pia] = [
     roles: ['OFFICE', 'INTEGRATOR'],
     skills: [],
   },
-] satisfies DemoPerson[];
-
-export const DEMO_OWNER: DemoPerson = ines;
-export const DEMO_OTHERS: readonly DemoPerson[] = [olle, mika, pia];
+];
 
 export interface DemoDesign {
   name: string;
   /** Finished size in millimetres. */
   size: { length: number; width: number; thickness: number };
   /** Species and width in millimetres of each strip. */
-  strips: readonly (readonly [string, number])[];
+  strips: readonly (readonly [SpeciesKey, number])[];
   slices: number;
   panelBoards: number;
   panelClampCount: number;

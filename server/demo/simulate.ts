@@ -1,7 +1,13 @@
 import { applyChanges } from '#shared/floor/apply';
 import { cardOf, type NextAction } from '#shared/floor/card';
 import { judge, type FloorView } from '#shared/floor/judge';
-import type { Actor, FloorBatch, FloorChangeSet, FloorCommand, FloorShop } from '#shared/floor/model';
+import type {
+  Actor,
+  FloorBatch,
+  FloorChangeSet,
+  FloorCommand,
+  FloorShop,
+} from '#shared/floor/model';
 import { piecesOf } from '#shared/floor/pieces';
 import { runOf, standardMinutes } from '#shared/floor/progress';
 import { MINUTE_MS, type Instant } from '#shared/time/instant';
@@ -53,7 +59,10 @@ export function simulateDays(given: {
   const { shop, people, from, now, isWorked } = given;
   let batches = given.batches.map(({ batch }) => batch);
   const events: SimulatedEvent[] = [];
-  const busy = new Map<string, { batchId: string; step: string; pieces: number[]; until: Instant }>();
+  const busy = new Map<
+    string,
+    { batchId: string; step: string; pieces: number[]; until: Instant }
+  >();
 
   const give = (
     batchId: string,
@@ -87,7 +96,11 @@ export function simulateDays(given: {
       const current = batches.find((candidate) => candidate.id === batch.id);
       if (!current || entersAt === null || entersAt > at) continue;
       if (current.releasedAt === null) give(batch.id, move('BLANK'), first, at);
-      else if (shipsWhenReady && current.shippedAt === null && cardOf(current, at).place === 'READY') {
+      else if (
+        shipsWhenReady &&
+        current.shippedAt === null &&
+        cardOf(current, at).place === 'READY'
+      ) {
         give(batch.id, move('SHIPPED'), first, at);
       }
     }

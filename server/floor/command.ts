@@ -38,8 +38,7 @@ export interface FloorCommandRequest {
 }
 
 type Outcome =
-  | { kind: 'DONE'; seq: number }
-  | { kind: 'REFUSED'; problems: BatchPayload['problems'] };
+  { kind: 'DONE'; seq: number } | { kind: 'REFUSED'; problems: BatchPayload['problems'] };
 
 /**
  * One floor command is one transaction: read the rows with their version, ask the rules, write the rows, append the
@@ -122,9 +121,7 @@ async function keepReworkReason(
 ): Promise<{ reasonId?: string }> {
   if (request.reason?.kind !== 'REWORK') return {};
   const id = newId();
-  await tx
-    .insert(reworkReason)
-    .values({ shopId, id, batchId, reason: request.reason.text.trim() });
+  await tx.insert(reworkReason).values({ shopId, id, batchId, reason: request.reason.text.trim() });
   return { reasonId: id };
 }
 

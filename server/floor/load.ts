@@ -62,9 +62,7 @@ export async function loadBatches(
       .where(inArray(holdOverride.batchId, ids))
       .orderBy(asc(holdOverride.at)),
   );
-  const forecasts = byBatch(
-    await tx.select().from(forecast).where(inArray(forecast.batchId, ids)),
-  );
+  const forecasts = byBatch(await tx.select().from(forecast).where(inArray(forecast.batchId, ids)));
   const undos = await lastCommands(tx, ids, now);
   return rows.map(({ batch: row, design: made }) => {
     const route = routes.get(row.routeId);
@@ -126,10 +124,7 @@ export async function loadBatches(
 }
 
 /** The batches that hold something now, or did after an instant: the others do not matter to what is free. */
-export async function batchesThatHold(
-  tx: Reader,
-  endedAfter: Instant,
-): Promise<string[]> {
+export async function batchesThatHold(tx: Reader, endedAfter: Instant): Promise<string[]> {
   const rows = await tx
     .selectDistinctOn([occupation.batchId], { id: occupation.batchId })
     .from(occupation)

@@ -29,12 +29,10 @@ export function readFloor(context: Context): Promise<Floor> {
       shop,
       members: members.map(presentMember),
       designs,
-      routes: [...routes.values()].map(
-        (route): Route => ({
-          id: globalId('route', route.id),
-          steps: route.steps.map(presentStep),
-        }),
-      ),
+      routes: [...routes.values()].map((route): Route => ({
+        id: globalId('route', route.id),
+        steps: route.steps.map(presentStep),
+      })),
       batches: loaded.map((batch) => presentBatch(batch, now)),
       watchers: services.hub.watchers(shopId),
     };

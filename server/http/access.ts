@@ -124,7 +124,10 @@ export function unauthenticated(): GraphQLError {
 }
 
 export function forbidden(): GraphQLError {
-  return new GraphQLError('Your role does not include this. An owner of the shop can change that.', {
-    extensions: { code: 'FORBIDDEN' },
-  });
+  return new GraphQLError(
+    'Your role does not include this. An owner of the shop can change that.',
+    {
+      extensions: { code: 'FORBIDDEN' },
+    },
+  );
 }

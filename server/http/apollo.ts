@@ -41,7 +41,7 @@ export function makeApollo(
     plugins: [
       ApolloServerPluginLandingPageDisabled(),
       ApolloServerPluginDrainHttpServer({ httpServer: server }),
-      blockFieldSuggestionsPlugin(),
+      blockFieldSuggestionsPlugin() as ApolloServerPlugin<Context>,
       endSnapshots,
       plainJsonStatus,
       introspectionForKnownCallers,
@@ -82,7 +82,7 @@ const introspectionForKnownCallers: ApolloServerPlugin<Context> = {
   requestDidStart: () =>
     Promise.resolve({
       didResolveOperation: ({ operation, contextValue }) => {
-        if (contextValue.principal) return Promise.resolve();
+        if (contextValue.principal || !operation) return Promise.resolve();
         const asks = operation.selectionSet.selections.some(
           (selection) =>
             selection.kind === 'Field' &&

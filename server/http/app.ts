@@ -34,7 +34,11 @@ export function makeApp(
   });
   app.get('/readyz', (_request, response) => {
     readiness(services, lifecycle).then(
-      (ready) => response.status(ready ? 200 : 503).type('text/plain').send(ready ? 'ready' : 'not ready'),
+      (ready) =>
+        response
+          .status(ready ? 200 : 503)
+          .type('text/plain')
+          .send(ready ? 'ready' : 'not ready'),
       () => response.status(503).type('text/plain').send('not ready'),
     );
   });
@@ -118,7 +122,9 @@ function mapErrors(log: Services['log']): ErrorRequestHandler {
         return;
       default:
         if (error.status !== undefined && error.status < 500) {
-          response.status(error.status).json(errorBody('BAD_REQUEST', 'The request cannot be read.'));
+          response
+            .status(error.status)
+            .json(errorBody('BAD_REQUEST', 'The request cannot be read.'));
           return;
         }
         log.error({ error }, 'a request failed');
@@ -132,4 +138,3 @@ function mapErrors(log: Services['log']): ErrorRequestHandler {
 function errorBody(code: string, message: string) {
   return { errors: [{ message, extensions: { code } }] };
 }
-

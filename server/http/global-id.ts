@@ -20,7 +20,8 @@ export function globalId(kind: IdKind, id: string): string {
 
 /** The row's uuid, or null when the text is not an id of that kind. */
 export function localId(kind: IdKind, id: string): string | null {
-  const match = /^([a-z]+)_([0-9a-f]{8})([0-9a-f]{4})([0-9a-f]{4})([0-9a-f]{4})([0-9a-f]{12})$/.exec(id);
+  const match =
+    /^([a-z]+)_([0-9a-f]{8})([0-9a-f]{4})([0-9a-f]{4})([0-9a-f]{4})([0-9a-f]{12})$/.exec(id);
   if (!match || match[1] !== kind) return null;
   return match.slice(2).join('-');
 }

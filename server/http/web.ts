@@ -9,8 +9,13 @@ export function serveWeb(app: Express, folder: string): void {
     express.static(folder, {
       index: false,
       setHeaders: (response, file) => {
-        const hashed = /-[A-Z0-9]{8}\.\w+$/.test(path.basename(file)) || file.includes(`${path.sep}media${path.sep}`);
-        response.setHeader('Cache-Control', hashed ? 'public, max-age=31536000, immutable' : 'no-cache');
+        const hashed =
+          /-[A-Z0-9]{8}\.\w+$/.test(path.basename(file)) ||
+          file.includes(`${path.sep}media${path.sep}`);
+        response.setHeader(
+          'Cache-Control',
+          hashed ? 'public, max-age=31536000, immutable' : 'no-cache',
+        );
       },
     }),
   );
@@ -21,7 +26,10 @@ export function serveWeb(app: Express, folder: string): void {
       path.extname(request.path) === '';
     if (!wantsPage) return next();
     if (!existsSync(page)) {
-      response.status(503).type('text/plain').send('The web app is not built yet: run "npm start".');
+      response
+        .status(503)
+        .type('text/plain')
+        .send('The web app is not built yet: run "npm start".');
       return;
     }
     response.setHeader('Cache-Control', 'no-cache');

@@ -83,14 +83,18 @@ export class Hub {
    * A shop's messages after a place in its stream (null: from now on), each event once and in order. Whoever is more
    * than a thousand events behind, or ahead of what there is, gets a reset.
    */
-  async *follow(shopId: string, after: number | null): AsyncGenerator<ShopMessage, void, undefined> {
+  async *follow(
+    shopId: string,
+    after: number | null,
+  ): AsyncGenerator<ShopMessage, void, undefined> {
     const feed = this.feedOf(shopId);
     const queue = new FeedQueue();
     feed.queues.add(queue);
     try {
       await feed.ready;
       queue.since = feed.seq;
-      if (after !== null && after !== feed.seq) yield await this.catchUp(shopId, after, queue.since);
+      if (after !== null && after !== feed.seq)
+        yield await this.catchUp(shopId, after, queue.since);
       yield* queue.drain(() => this.resetMessage(shopId, feed.seq));
     } finally {
       feed.queues.delete(queue);

@@ -17,14 +17,17 @@ export const liveResolvers: Resolvers = {
       subscribe: (_source, { after }, context: Context) => {
         const seq = after == null ? null : fromCursor(after);
         if (after != null && seq === null) {
-          throw new GraphQLError('This is not a place in the stream: hand cursors back as they came.', {
-            extensions: { code: 'BAD_USER_INPUT' },
-          });
+          throw new GraphQLError(
+            'This is not a place in the stream: hand cursors back as they came.',
+            {
+              extensions: { code: 'BAD_USER_INPUT' },
+            },
+          );
         }
         const shopId = context.principal?.shopId ?? '';
         return context.services.hub.follow(shopId, seq) as AsyncGenerator<never>;
       },
-      resolve: (message: unknown, _args, context) =>
+      resolve: (message: unknown, _args: unknown, context: Context) =>
         presentMessage(message as ShopMessage, context),
     },
   },

@@ -22,7 +22,7 @@ import { subscribeOnce } from './subscribe-once';
 const FORBIDDEN = 4403;
 const RECHECK_MS = 60_000;
 
-interface Extra {
+interface Extra extends Record<PropertyKey, unknown> {
   socket: WebSocket;
   request: IncomingMessage;
   principal?: Principal;
@@ -44,7 +44,8 @@ export function serveSockets(
 
   server.on('upgrade', (request: IncomingMessage, stream: Duplex, head: Buffer) => {
     const path = new URL(request.url ?? '/', 'http://localhost').pathname;
-    const refuse = (status: string) => stream.end(`HTTP/1.1 ${status}\r\nConnection: close\r\n\r\n`);
+    const refuse = (status: string) =>
+      stream.end(`HTTP/1.1 ${status}\r\nConnection: close\r\n\r\n`);
     stream.on('error', () => stream.destroy());
     if (path !== '/graphql') return refuse('404 Not Found');
     if (!isOwnOrigin(request, services.settings)) return refuse('403 Forbidden');
@@ -166,12 +167,17 @@ function readDocument(
     );
     if (!others) return document;
     return [
-      new GraphQLError('A socket carries subscriptions only. Send queries and mutations over HTTP.', {
-        extensions: { code: 'SUBSCRIPTIONS_ONLY' },
-      }),
+      new GraphQLError(
+        'A socket carries subscriptions only. Send queries and mutations over HTTP.',
+        {
+          extensions: { code: 'SUBSCRIPTIONS_ONLY' },
+        },
+      ),
     ];
   } catch (error) {
-    return [error instanceof GraphQLError ? error : new GraphQLError('The document cannot be read.')];
+    return [
+      error instanceof GraphQLError ? error : new GraphQLError('The document cannot be read.'),
+    ];
   }
 }
 
@@ -185,4 +191,3 @@ function hideInternals(error: GraphQLError): GraphQLError {
     extensions: { code: 'INTERNAL_SERVER_ERROR' },
   });
 }
-

@@ -40,14 +40,17 @@ export class Planner {
   private ready(): Worker {
     if (this.worker) return this.worker;
     const worker = startThread();
-    worker.on('message', ({ id, result, error }: { id: number; result?: PlanResult; error?: string }) => {
-      const asked = this.waiting.get(id);
-      if (!asked) return;
-      this.waiting.delete(id);
-      clearTimeout(asked.timer);
-      if (result) asked.resolve(result);
-      else asked.reject(new Error(error ?? 'The planner failed.'));
-    });
+    worker.on(
+      'message',
+      ({ id, result, error }: { id: number; result?: PlanResult; error?: string }) => {
+        const asked = this.waiting.get(id);
+        if (!asked) return;
+        this.waiting.delete(id);
+        clearTimeout(asked.timer);
+        if (result) asked.resolve(result);
+        else asked.reject(new Error(error ?? 'The planner failed.'));
+      },
+    );
     const gone = (error: Error) => {
       if (this.worker === worker) this.worker = null;
       for (const [id, asked] of this.waiting) {

@@ -4,10 +4,11 @@
  */
 import { allowChildren, endChildren } from '../server/launch/children.mjs';
 import { installPackagesWhenStale } from '../server/launch/packages.mjs';
+import { hasPostgres, installPackages } from '../server/launch/postgres.mjs';
 import { root } from '../server/launch/root.mjs';
 import { say } from '../server/launch/say.mjs';
 import { Stop } from '../server/launch/stop.mjs';
-import { findChromium } from './gates/chromium.mjs';
+import { chromiumOnPath, findChromium } from './gates/chromium.mjs';
 import { gates } from './gates/gates.mjs';
 import { startThrowAway } from './throw-away.mjs';
 
@@ -35,10 +36,23 @@ function chosenGates() {
   return names.length === 0 ? gates : gates.filter((gate) => names.includes(gate.name));
 }
 
+/** Both programs at once, so that whoever may not install them is told one command. */
+async function installPrograms(needs) {
+  const missing = [
+    ...(needs.has('database') && !(await hasPostgres()) ? ['postgresql'] : []),
+    ...(needs.has('chromium') && !process.env.TEST_CHROMIUM && !chromiumOnPath()
+      ? ['chromium']
+      : []),
+  ];
+  if (missing.length === 0) return;
+  await installPackages(missing, `The tests use what is not installed (${missing.join(', ')})`);
+}
+
 /** What the chosen gates need from the machine, before the first of them runs. */
 async function prepare(chosen) {
   const needs = new Set(chosen.flatMap((gate) => gate.needs ?? []));
   await installPackagesWhenStale();
+  await installPrograms(needs);
   if (needs.has('chromium')) process.env.TEST_CHROMIUM = await findChromium();
   if (needs.has('database')) {
     const cluster = await startThrowAway();

@@ -36,7 +36,7 @@ async function installed() {
 export async function findPostgres() {
   const [before] = await installed();
   if (before) return before;
-  await installPackages(['postgresql'], 'PostgreSQL is not installed', keepFromMakingACluster);
+  await installPackages(['postgresql'], 'PostgreSQL is not installed');
   const [after] = await installed();
   if (after) return after;
   throw new Stop(
@@ -49,13 +49,18 @@ export async function findPostgresOf(major) {
   return (await installed()).find((one) => one.major === major) ?? null;
 }
 
+/** Whether a PostgreSQL is here, without installing one. */
+export async function hasPostgres() {
+  return (await installed()).length > 0;
+}
+
 /** Installs Debian packages, or stops with the one command that does. */
-export async function installPackages(names, why, before = async () => {}) {
+export async function installPackages(names, why) {
   const command = `apt-get update && apt-get install -y ${names.join(' ')}`;
   if (!isRoot || !existsSync('/usr/bin/apt-get')) {
     throw new Stop(`${why}: type "sudo sh -c '${command}'" and start again.`);
   }
-  await before();
+  if (names.includes('postgresql')) await keepFromMakingACluster();
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
   await saySlow(`${why}: installing Debian's package ${names.join(' ')}`, async () => {
     try {

@@ -10,17 +10,18 @@ export async function findChromium() {
     if (existsSync(chosen)) return chosen;
     throw new Stop(`TEST_CHROMIUM names ${chosen}, which does not exist: correct or unset it.`);
   }
-  const before = onPath();
+  const before = chromiumOnPath();
   if (before) return before;
   await installPackages(['chromium'], 'Chromium, which the browser tests use, is not installed');
-  const after = onPath();
+  const after = chromiumOnPath();
   if (after) return after;
   throw new Stop(
     'Debian\'s package "chromium" brought no program of that name: set TEST_CHROMIUM to a browser.',
   );
 }
 
-function onPath() {
+/** Debian's Chromium on this machine, if it is here. */
+export function chromiumOnPath() {
   const folders = [...(process.env.PATH ?? '').split(':'), '/usr/bin'];
   return folders.map((folder) => path.join(folder, 'chromium')).find((file) => existsSync(file));
 }

@@ -29,6 +29,14 @@ import { Session } from './session';
     td:last-child {
       text-align: end;
     }
+    @media (max-width: 600px) {
+      .signed-in {
+        display: none;
+      }
+      .ct-panel {
+        padding: 8px;
+      }
+    }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })

@@ -1,9 +1,10 @@
-import { ChangeDetectionStrategy, Component, inject, input, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, inject, Injector, input, signal } from '@angular/core';
 import { Router, RouterLink } from '@angular/router';
 import { Apollo } from 'apollo-angular';
 import { firstValueFrom } from 'rxjs';
 import { SignInDocument } from '../graphql/generated/graphql';
 import { failureSentence } from '../ui/failure-sentence';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { has, ProblemList, type FormProblem } from '../ui/problem-list';
 import { EntryFrame } from './entry-frame';
 import { Session } from './session';
@@ -18,6 +19,7 @@ import { firstPage, safeNext } from './session-guard';
 })
 export class SignInPage {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
   private readonly router = inject(Router);
   private readonly session = inject(Session);
 
@@ -34,7 +36,11 @@ export class SignInPage {
     if (this.busy()) return;
     const missing = missingFields(email, password);
     this.problems.set(missing);
-    if (missing.length > 0) return;
+    const form = event.target as HTMLFormElement;
+    if (missing.length > 0) {
+      focusFirstProblem(form, this.injector);
+      return;
+    }
     this.busy.set(true);
     try {
       const variables = { email: email.trim(), password };
@@ -53,6 +59,7 @@ export class SignInPage {
     } catch (error) {
       this.problems.set([{ field: null, sentence: failureSentence(error) }]);
     } finally {
+      focusFirstProblem(form, this.injector);
       this.busy.set(false);
     }
   }

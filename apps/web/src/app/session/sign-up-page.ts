@@ -1,10 +1,11 @@
-import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, inject, Injector, signal } from '@angular/core';
 import { Router, RouterLink } from '@angular/router';
 import { signUpSchema } from '#shared/session/sign-up-schema';
 import { Apollo } from 'apollo-angular';
 import { firstValueFrom } from 'rxjs';
 import { SignUpDocument, type SignUpInput } from '../graphql/generated/graphql';
 import { failureSentence } from '../ui/failure-sentence';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { has, ProblemList, type FormProblem } from '../ui/problem-list';
 import { EntryFrame } from './entry-frame';
 import { Session } from './session';
@@ -21,6 +22,7 @@ const FIELDS = ['shopName', 'zone', 'name', 'email', 'password'] as const;
 })
 export class SignUpPage {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
   private readonly router = inject(Router);
   private readonly session = inject(Session);
 
@@ -36,7 +38,11 @@ export class SignUpPage {
     if (this.busy()) return;
     const wrong = wrongFields(input);
     this.problems.set(wrong);
-    if (wrong.length > 0) return;
+    const form = event.target as HTMLFormElement;
+    if (wrong.length > 0) {
+      focusFirstProblem(form, this.injector);
+      return;
+    }
     this.busy.set(true);
     try {
       const { data } = await firstValueFrom(
@@ -51,6 +57,7 @@ export class SignUpPage {
     } catch (error) {
       this.problems.set([{ field: null, sentence: failureSentence(error) }]);
     } finally {
+      focusFirstProblem(form, this.injector);
       this.busy.set(false);
     }
   }

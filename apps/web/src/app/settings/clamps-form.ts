@@ -3,6 +3,7 @@ import {
   Component,
   computed,
   inject,
+  Injector,
   input,
   linkedSignal,
   signal,
@@ -13,6 +14,7 @@ import { Apollo } from 'apollo-angular';
 import { firstValueFrom } from 'rxjs';
 import { SetClampsDocument, type SettingsQuery } from '../graphql/generated/graphql';
 import { failureSentence } from '../ui/failure-sentence';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { Icon } from '../ui/icon';
 import { has, ProblemList } from '../ui/problem-list';
 import { nextBasis } from './basis';
@@ -32,6 +34,7 @@ type Newer = Pick<Basis, 'version' | 'clamps'>;
 })
 export class ClampsForm {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
 
   readonly shop = input.required<Basis>();
 
@@ -77,13 +80,17 @@ export class ClampsForm {
   protected async save(event: Event): Promise<void> {
     event.preventDefault();
     if (this.busy()) return;
-    const form = new FormData(event.target as HTMLFormElement);
+    const element = event.target as HTMLFormElement;
+    const form = new FormData(element);
     const { version, lengthUnit } = this.basis();
     const { clamps, problems } = readClamps(this.rows(), lengthUnit, (name) =>
       String(form.get(name) ?? ''),
     );
     this.told.set({ problems });
-    if (problems.length > 0) return;
+    if (problems.length > 0) {
+      focusFirstProblem(element, this.injector);
+      return;
+    }
     this.busy.set(true);
     try {
       const { data } = await firstValueFrom(
@@ -101,6 +108,7 @@ export class ClampsForm {
     } catch (error) {
       this.told.set({ problems: [{ field: null, sentence: failureSentence(error) }] });
     } finally {
+      focusFirstProblem(element, this.injector);
       this.busy.set(false);
     }
   }

@@ -3,6 +3,7 @@ import {
   Component,
   computed,
   inject,
+  Injector,
   input,
   linkedSignal,
   signal,
@@ -12,6 +13,7 @@ import { Apollo } from 'apollo-angular';
 import { firstValueFrom } from 'rxjs';
 import { SetHoursDocument, type SettingsQuery } from '../graphql/generated/graphql';
 import { failureSentence } from '../ui/failure-sentence';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { Icon } from '../ui/icon';
 import { has, ProblemList } from '../ui/problem-list';
 import { checkHours, onForm } from './check-hours';
@@ -33,6 +35,7 @@ type Basis = Pick<SettingsQuery['shop'], 'version' | 'weekly' | 'exceptions'>;
 })
 export class HoursForm {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
 
   readonly shop = input.required<Basis>();
 
@@ -83,12 +86,16 @@ export class HoursForm {
   protected async save(event: Event): Promise<void> {
     event.preventDefault();
     if (this.busy()) return;
-    const form = new FormData(event.target as HTMLFormElement);
+    const element = event.target as HTMLFormElement;
+    const form = new FormData(element);
     const draft = readHours(this.rows(), (name) => String(form.get(name) ?? ''));
     const { weekly, exceptions } = draft;
     const problems = draft.problems.length > 0 ? draft.problems : checkHours(weekly, exceptions);
     this.told.set({ problems });
-    if (problems.length > 0) return;
+    if (problems.length > 0) {
+      focusFirstProblem(element, this.injector);
+      return;
+    }
     this.busy.set(true);
     const variables = { version: this.basis().version, weekly, exceptions };
     try {
@@ -107,6 +114,7 @@ export class HoursForm {
     } catch (error) {
       this.told.set({ problems: [{ field: null, sentence: failureSentence(error) }] });
     } finally {
+      focusFirstProblem(element, this.injector);
       this.busy.set(false);
     }
   }

@@ -2,7 +2,7 @@ import {
   afterNextRender,
   ChangeDetectionStrategy,
   Component,
-  ElementRef,
+  type ElementRef,
   input,
   output,
   signal,
@@ -43,7 +43,6 @@ export const LONGEST_REASON = 500;
       aria-labelledby="ask-heading"
       aria-describedby="ask-text"
       (close)="answered.emit(answer)"
-      (click)="closeOutside($event)"
     >
       <form method="dialog" novalidate (submit)="submit($event)">
         <h2 id="ask-heading">{{ question().heading }}</h2>
@@ -172,10 +171,5 @@ export class AskDialog {
     if ((needsReason && this.tooShort()) || (caution && !this.cautionRead())) return;
     this.answer = { reason: this.text().trim(), cautionRead: this.cautionRead() };
     this.dialog().nativeElement.close();
-  }
-
-  protected closeOutside(event: MouseEvent): void {
-    const dialog = this.dialog().nativeElement;
-    if (event.target === dialog) dialog.close();
   }
 }

@@ -1,3 +1,4 @@
+import { isLocalDate } from '#shared/time/zone';
 import * as z from 'zod';
 
 export const MOST_BOARDS = 200;
@@ -8,10 +9,7 @@ const NOT_A_DATE = 'Enter a date that is in the calendar, as 2026-12-01.';
 const KEY_RANGE = `The key has 1 to ${LONGEST_KEY} characters.`;
 
 /** A local calendar date, 2026-12-01, that exists. */
-const calendarDate = z
-  .string(NOT_A_DATE)
-  .regex(/^\d{4}-\d{2}-\d{2}$/, NOT_A_DATE)
-  .refine(isCalendarDate, NOT_A_DATE);
+const calendarDate = z.string(NOT_A_DATE).refine(isLocalDate, NOT_A_DATE);
 
 /** What a new batch is made of, beside its design. Every issue's path leads to the field, its message is for a person. */
 export const batchSchema = z.object({
@@ -34,10 +32,3 @@ export function batchSchemaOn(today: string) {
 }
 
 export type NewBatch = z.output<typeof batchSchema>;
-
-function isCalendarDate(text: string): boolean {
-  const [year = 0, month = 0, day = 0] = text.split('-').map(Number);
-  // The calendar repeats after 400 years; below the year 100 this constructor would read 19xx.
-  const date = new Date(Date.UTC((year % 400) + 2000, month - 1, day));
-  return date.getUTCMonth() === month - 1 && date.getUTCDate() === day;
-}

@@ -83,7 +83,7 @@ async function buildServer(folder) {
 }
 
 async function mustBuild(name, args) {
-  const env = { ...process.env, NG_CLI_ANALYTICS: 'false' };
+  const env = { ...process.env, NG_CLI_ANALYTICS: 'false', NO_COLOR: '1', FORCE_COLOR: '0' };
   const { code, output } = await run(process.execPath, args, { cwd: root, env });
   if (code !== 0) throw buildProblem(name, output.trim());
   const warnings = output.split('\n').filter((line) => line.includes('[WARNING]'));

@@ -110,7 +110,7 @@ export async function startCluster(folder, postgres, { throwAway = false } = {})
       ...(throwAway ? THROW_AWAY : []),
     ];
     await writeOwn(path.join(dataOf(folder), 'clamptide.conf'), `${settings.join('\n')}\n`);
-    await rm(logOf(folder), { force: true });
+    await rename(logOf(folder), `${logOf(folder)}.old`).catch(() => {});
     // The server itself must not hold our pipes open, so its words go to a file.
     const started = await runAsOwner('sh', [
       ...['-c', 'exec "$1" -D "$2" -l "$3" -w -t 60 -s start </dev/null >/dev/null 2>&1', 'sh'],

@@ -38,6 +38,8 @@ main().catch((error: unknown) => {
     process.stderr.write(`${error.message}\n`);
     process.exit(EXIT_SETUP);
   }
-  process.stderr.write(`${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`);
+  process.stderr.write(
+    `${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`,
+  );
   process.exit(1);
 });

@@ -34,7 +34,12 @@ export async function startServer(given: {
   const doors = openDoors(settings.adminDatabaseUrl, settings.secrets, (error) =>
     log.warn({ error }, 'a database connection broke'),
   );
-  const hub = new Hub(doors, log, now, doorUrl(settings.adminDatabaseUrl, 'relay', settings.secrets));
+  const hub = new Hub(
+    doors,
+    log,
+    now,
+    doorUrl(settings.adminDatabaseUrl, 'relay', settings.secrets),
+  );
   const services: Services = { settings, doors, hub, log, now };
   const lifecycle: Lifecycle = { draining: false };
   const httpServer = createServer();

@@ -96,7 +96,10 @@ export function openDoors(
     ping: async () => {
       let timer: NodeJS.Timeout | undefined;
       const tooLate = new Promise<never>((_, reject) => {
-        timer = setTimeout(() => reject(new Error('The database did not answer in a second.')), 1000);
+        timer = setTimeout(
+          () => reject(new Error('The database did not answer in a second.')),
+          1000,
+        );
       });
       try {
         await Promise.race([shopPool.query('select 1'), tooLate]);

@@ -77,7 +77,7 @@ async function makeRoles(
     await client.query(`alter role ${role} set lock_timeout = '5s'`);
   }
   await client.query(`revoke all on schema public from public`);
-  await client.query(`grant create, usage on schema public to ${OWNER}`);
+  await client.query(`grant create, usage on schema public to ${OWNER} with grant option`);
   await client.query(`grant create on database ${database} to ${OWNER}, ${roleOf('work')}`);
 }
 

@@ -14,10 +14,17 @@ interface Issues {
   error: { issues: readonly { path: readonly PropertyKey[]; message: string }[] };
 }
 
-/** One problem for each thing that a schema found wrong; `root` is the argument's name where the schema is of its value. */
+/**
+ * One problem for each field that a schema found something wrong with: the first, as those that follow tend to follow from
+ * it. `root` is the argument's name where the schema is of its value.
+ */
 export function inputProblems(failed: Issues, root?: string): Problem[] {
-  return failed.error.issues.map((issue) => {
-    const path = [...(root === undefined ? [] : [root]), ...issue.path.map(String)];
-    return problem('INVALID_INPUT', issue.message, path.join('.') || null);
-  });
+  const byField = new Map<string, Problem>();
+  for (const issue of failed.error.issues) {
+    const field = [...(root === undefined ? [] : [root]), ...issue.path.map(String)].join('.');
+    if (!byField.has(field)) {
+      byField.set(field, problem('INVALID_INPUT', issue.message, field || null));
+    }
+  }
+  return [...byField.values()];
 }

@@ -20,7 +20,7 @@ async function proxyFile(port) {
   return 'dist/proxy.json';
 }
 
-await launch(async () => {
+await launch(async (asked) => {
   if (process.env.NODE_ENV === 'production') {
     throw new Stop('"npm run dev" is for development: unset NODE_ENV, or use "npm start".');
   }
@@ -38,11 +38,12 @@ await launch(async () => {
   ];
   const app = ['node_modules/@angular/cli/bin/ng.js', 'serve', `--port=${APP_PORT}`];
   const ended = await Promise.race([
+    asked,
     run(process.execPath, server, { env, show: true }),
     run(process.execPath, [...app, `--proxy-config=${proxy}`], {
       env: { ...env, NG_CLI_ANALYTICS: 'false' },
       show: true,
     }),
   ]);
-  throw new Stop(`One half ended (exit code ${ended.code}); its words stand above.`);
+  if (ended) throw new Stop(`One half ended (exit code ${ended.code}); its words stand above.`);
 });

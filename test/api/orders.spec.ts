@@ -230,7 +230,7 @@ describe('reading orders', () => {
     expect((await owner.caller.ask(LIST, variables)).codes).toEqual(['BAD_USER_INPUT']);
   });
 
-  it('asks the database as often for a hundred orders as for two', async () => {
+  it('asks the database as often for twelve orders as for two', async () => {
     const { caller } = await newOwner(server);
     const design = await newDesign(caller);
     const make = async () => {

@@ -46,6 +46,7 @@ export class LiveFeed {
 
   private readonly stateNow = signal<LiveState>('off');
   private readonly sinceNow = signal<number | null>(null);
+  private readonly heardAtNow = signal<number | null>(null);
   private readonly watchersNow = signal<number | null>(null);
   private readonly changes = new Subject<FloorChange>();
   private socket: Promise<Client> | null = null;
@@ -58,6 +59,8 @@ export class LiveFeed {
   readonly state = this.stateNow.asReadonly();
   /** Since when the line is down, milliseconds on the server's clock; null while it is up. */
   readonly since = this.sinceNow.asReadonly();
+  /** When the server last gave a sign of life, milliseconds on its clock; null before the first. */
+  readonly heardAt = this.heardAtNow.asReadonly();
   /** How many screens and browsers watch; null until the server has said. */
   readonly watchers = this.watchersNow.asReadonly();
   readonly changes$ = this.changes.asObservable();
@@ -127,7 +130,9 @@ export class LiveFeed {
         const token = this.bearer.token();
         return token ? { authorization: `Bearer ${token}` } : {};
       },
+      heard: () => this.heardAtNow.set(this.clock.now()),
       connected: (again) => {
+        this.heardAtNow.set(this.clock.now());
         this.stateNow.set('catching-up');
         this.settleSoon();
         // Followed from now on and never heard anything: what happened in between is unknown.
@@ -143,6 +148,7 @@ export class LiveFeed {
   private take(change: FloorChange): void {
     this.failures = 0;
     this.clock.observe(change.now);
+    this.heardAtNow.set(this.clock.now());
     this.watchersNow.set(change.watchers);
     if (this.stateNow() !== 'connected') this.settleSoon();
     this.changes.next(change);

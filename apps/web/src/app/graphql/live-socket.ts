@@ -9,6 +9,8 @@ export interface SocketEvents {
   /** Sent parameters when the socket opens, asked again at each attempt. */
   params(): Record<string, unknown>;
   connected(again: boolean): void;
+  /** The other side gave a sign of life. */
+  heard(): void;
   /** The connection is gone; the code is the socket's close code, 1006 when there was none. */
   closed(code: number): void;
 }
@@ -57,7 +59,9 @@ export function openSocket(events: SocketEvents): Client {
         }, PONG_WITHIN);
       },
       pong: (received) => {
-        if (received) clearTimeout(pongDue);
+        if (!received) return;
+        clearTimeout(pongDue);
+        events.heard();
       },
       closed: (event) => {
         clearTimeout(pongDue);

@@ -1,5 +1,6 @@
 import { isSpecies } from '#shared/designs/species';
 import { MILLIMETRE } from '#shared/length/length';
+import { nameSchema } from '#shared/words/name-schema';
 import * as z from 'zod';
 
 export const LONGEST_DESIGN_NAME = 60;
@@ -32,11 +33,7 @@ const strip = z.object({
 
 /** A design as the API takes it. Every issue's path leads to the field, and its message is for a person. */
 export const designSchema = z.object({
-  name: z
-    .string('Give the design a name.')
-    .trim()
-    .min(1, 'Give the design a name.')
-    .max(LONGEST_DESIGN_NAME, `A name has ${LONGEST_DESIGN_NAME} characters at most.`),
+  name: nameSchema('The design’s name', LONGEST_DESIGN_NAME),
   length: length(50n * MILLIMETRE, 1_500n * MILLIMETRE, SIDE),
   width: length(50n * MILLIMETRE, 1_500n * MILLIMETRE, SIDE),
   thickness: length(10n * MILLIMETRE, 150n * MILLIMETRE, THICKNESS),

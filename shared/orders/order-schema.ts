@@ -1,3 +1,4 @@
+import { nameSchema } from '#shared/words/name-schema';
 import * as z from 'zod';
 
 export const LONGEST_CUSTOMER_NAME = 120;
@@ -25,11 +26,7 @@ const line = z.object({
 
 /** An order as the API takes it. Every issue's path leads to the field, and its message is for a person. */
 export const orderSchema = z.object({
-  customerName: z
-    .string('Enter the customer’s name.')
-    .trim()
-    .min(1, 'Enter the customer’s name.')
-    .max(LONGEST_CUSTOMER_NAME, `A name has ${LONGEST_CUSTOMER_NAME} characters at most.`),
+  customerName: nameSchema('The customer’s name', LONGEST_CUSTOMER_NAME),
   customerEmail: optional(
     z
       .string()

@@ -1,3 +1,4 @@
+import { placeWords } from '#shared/words/card-words';
 import type { OrderStatus, Place } from '../graphql/generated/graphql';
 
 /** In the order in which an order goes through them. */
@@ -40,32 +41,9 @@ export function statusMeaning(status: OrderStatus): string {
   }
 }
 
-/** The stage that a line or an order stands in; "no batch yet" when nothing makes it. */
+/** The stage that a line or an order stands in. */
 export function stageName(stage: Place | null): string {
-  switch (stage) {
-    case null:
-      return 'no batch yet';
-    case 'QUEUED':
-      return 'queued';
-    case 'BLANK':
-      return 'blank';
-    case 'FIRST_GLUE_UP':
-      return 'first glue-up';
-    case 'SLICE':
-      return 'slice';
-    case 'SECOND_GLUE_UP':
-      return 'second glue-up';
-    case 'SURFACE':
-      return 'surface';
-    case 'SAND':
-      return 'sand';
-    case 'FINISH':
-      return 'finish';
-    case 'READY':
-      return 'ready';
-    case 'SHIPPED':
-      return 'shipped';
-  }
+  return stage === null ? 'no batch yet' : placeWords(stage);
 }
 
 /** "1 board", "12 boards" */

@@ -226,7 +226,8 @@ class ForwardPass {
 
   /** The earliest start that order and waits allow, on whole minutes. */
   private earliest(activity: Activity): { at: Instant; reason: Reason } {
-    let at = this.problem.now;
+    // Being ready is no work: it may have come about before now.
+    let at = activity.isEnd && activity.links.length === 0 ? 0 : this.problem.now;
     let reason: Reason = { code: 'NOW' };
     for (const fact of activity.facts) {
       if (fact.notBefore <= at) continue;

@@ -69,6 +69,7 @@ async function runGate(gate) {
     if (interrupted) throw error;
     return { passed: 0, failed: 1, output: explain(error) };
   });
+  if (gate.name === 'build') process.env.TEST_BUILT = result.failed > 0 ? 'failed' : 'yes';
   total.passed += result.passed;
   total.failed += result.failed;
   if (result.failed > 0) say(`\n${result.output.trim()}\n`);

@@ -25,7 +25,7 @@ export async function startServer(
   adminUrl: string,
   env: Record<string, string> = {},
 ): Promise<TestServer> {
-  await buildWhenStale(TEST_BUILD);
+  await needBuild();
   const port = await freePort();
   const data = await mkdtemp(path.join(tmpdir(), 'clamptide-data-'));
   const server = serve(['--enable-source-maps', `dist/${TEST_BUILD}server/main.mjs`], {
@@ -50,6 +50,13 @@ export async function startServer(
     throw error;
   }
   return { url: `http://localhost:${port}`, port, stop };
+}
+
+/** A run of `npm test` has built already, and says how that went: building again for each test would only take time. */
+async function needBuild(): Promise<void> {
+  const built = process.env['TEST_BUILT'];
+  if (built === 'failed') throw new Error('The build failed, so there is no server to start.');
+  if (built !== 'yes') await buildWhenStale(TEST_BUILD);
 }
 
 /** Debian's Chromium, or the browser that TEST_CHROMIUM names. */

@@ -1,4 +1,10 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import {
+  booleanAttribute,
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  input,
+} from '@angular/core';
 import { drawSwatch, SWATCH_SIZE } from '#shared/designs/swatch';
 
 /** What a swatch needs of a design; lengths as the API gives them, decimal strings of nanometres. */
@@ -52,7 +58,7 @@ export interface SwatchDesign {
 export class Swatch {
   readonly design = input.required<SwatchDesign>();
   /** Set it where the design's name stands beside the swatch anyway. */
-  readonly decorative = input(false);
+  readonly decorative = input(false, { transform: booleanAttribute });
 
   protected readonly box = `0 0 ${SWATCH_SIZE} ${SWATCH_SIZE}`;
   protected readonly drawing = computed(() => {

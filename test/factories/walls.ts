@@ -18,6 +18,14 @@ export async function shopTables(admin: pg.Pool): Promise<ShopTable[]> {
   ];
 }
 
+/** Credentials and pairings name a shop but belong to people and displays, the cursor to the relay. */
+const BESIDE_THE_WALL = ['session', 'pairing', 'relay_cursor'];
+
+/** Tables that the door of a shop opens to, behind the wall. */
+export async function walledTables(admin: pg.Pool): Promise<ShopTable[]> {
+  return (await shopTables(admin)).filter(({ name }) => !BESIDE_THE_WALL.includes(name));
+}
+
 /** What background work writes on its own, and what is noted of credentials when they are used. */
 const MOVES_BY_ITSELF = ['plan', 'forecast', 'shop_counter', 'relay_cursor', 'session', 'pairing'];
 

@@ -1,9 +1,8 @@
 import type { Server } from 'node:http';
-import { blockFieldSuggestionsPlugin } from '@escape.tech/graphql-armor-block-field-suggestions';
 import { ApolloServer, type ApolloServerPlugin } from '@apollo/server';
 import { ApolloServerPluginLandingPageDisabled } from '@apollo/server/plugin/disabled';
 import { ApolloServerPluginDrainHttpServer } from '@apollo/server/plugin/drainHttpServer';
-import { GraphQLError, type GraphQLSchema } from 'graphql';
+import { BREAK, GraphQLError, visit, type DocumentNode, type GraphQLSchema } from 'graphql';
 import type { Logger } from 'pino';
 import type { Context } from './context';
 import { LIMIT_RULES, MAX_TOKENS } from './limits';
@@ -26,12 +25,19 @@ export function makeApollo(
     schema,
     introspection: true,
     csrfPrevention: true,
+    hideSchemaDetailsFromClientErrors: true,
     stopOnTerminationSignals: false,
     includeStacktraceInErrorResponses: false,
     validationRules: [...LIMIT_RULES],
     parseOptions: { maxTokens: MAX_TOKENS },
     formatError: (formatted, error) => {
       if (formatted.extensions?.['code'] !== 'INTERNAL_SERVER_ERROR') return formatted;
+      if (isUnstorable(error)) {
+        return {
+          message: 'A text has a character in it that cannot be stored.',
+          extensions: { code: 'BAD_USER_INPUT' },
+        };
+      }
       log.error({ error }, 'a resolver failed');
       return {
         message: 'Something went wrong on the server. Nothing was half done; try again.',
@@ -41,12 +47,23 @@ export function makeApollo(
     plugins: [
       ApolloServerPluginLandingPageDisabled(),
       ApolloServerPluginDrainHttpServer({ httpServer: server }),
-      blockFieldSuggestionsPlugin() as ApolloServerPlugin<Context>,
       endSnapshots,
       plainJsonStatus,
       introspectionForKnownCallers,
     ],
   });
+}
+
+/** PostgreSQL's codes for a text with the character NUL, as text and inside JSON. */
+const UNSTORABLE = ['22021', '22P05'];
+
+/** Whether the database refused a text that no type of the API excludes. The error stands behind those that wrap it. */
+function isUnstorable(error: unknown): boolean {
+  for (let depth = 0; depth < 6 && error instanceof Error; depth++) {
+    if (UNSTORABLE.includes(String((error as { code?: unknown }).code))) return true;
+    error = error instanceof GraphQLError ? error.originalError : error.cause;
+  }
+  return false;
 }
 
 /** The snapshot of an operation ends with its response. */
@@ -81,17 +98,23 @@ const plainJsonStatus: ApolloServerPlugin<Context> = {
 const introspectionForKnownCallers: ApolloServerPlugin<Context> = {
   requestDidStart: () =>
     Promise.resolve({
-      didResolveOperation: ({ operation, contextValue }) => {
-        if (contextValue.principal || !operation) return Promise.resolve();
-        const asks = operation.selectionSet.selections.some(
-          (selection) =>
-            selection.kind === 'Field' &&
-            (selection.name.value === '__schema' || selection.name.value === '__type'),
-        );
-        if (!asks) return Promise.resolve();
+      didResolveOperation: ({ document, contextValue }) => {
+        if (contextValue.principal || !asksForSchema(document)) return Promise.resolve();
         throw new GraphQLError('Sign in or send an API key to read the schema.', {
           extensions: { code: 'UNAUTHENTICATED' },
         });
       },
     }),
 };
+
+/** Whether a document asks about the schema, also by way of a fragment. */
+function asksForSchema(document: DocumentNode): boolean {
+  let asks = false;
+  visit(document, {
+    Field: ({ name }) => {
+      asks ||= name.value === '__schema' || name.value === '__type';
+      return asks ? BREAK : undefined;
+    },
+  });
+  return asks;
+}

@@ -159,7 +159,7 @@ function readDocument(
 ): DocumentNode | readonly GraphQLError[] {
   try {
     const document = parse(query, { maxTokens: MAX_TOKENS });
-    const errors = validate(schema, document, SOCKET_RULES);
+    const errors = validate(schema, document, SOCKET_RULES, { hideSuggestions: true });
     if (errors.length > 0) return errors;
     const others = document.definitions.some(
       (definition) =>

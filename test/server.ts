@@ -13,6 +13,8 @@ export interface TestServer {
   /** Without a slash at the end. */
   url: string;
   port: number;
+  /** The process, for measuring it. */
+  pid: number;
   /** Ends it as a person would, with a signal, and waits until it is gone. */
   stop(): Promise<void>;
 }
@@ -49,7 +51,7 @@ export async function startServer(
     await stop();
     throw error;
   }
-  return { url: `http://localhost:${port}`, port, stop };
+  return { url: `http://localhost:${port}`, port, pid: server.pid, stop };
 }
 
 /** A run of `npm test` has built already, and says how that went: building again for each test would only take time. */

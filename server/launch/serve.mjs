@@ -38,7 +38,7 @@ export function serve(args, env) {
     await ended;
     clearTimeout(timer);
   };
-  return { ready, ended, stop };
+  return { ready, ended, stop, pid: child.pid };
 }
 
 function whyEnded(code, signal) {

@@ -112,7 +112,8 @@ function activitiesOf(
         people: step.people,
         skill: step.skill,
         needs: startedAt === null ? needsOf(batch, shop, step, piece) : [],
-        ...linksTo(batch, index, step, piece),
+        // What is under way has everything before it behind it.
+        ...(startedAt === null ? linksTo(batch, index, step, piece) : { links: [], facts: [] }),
         started: startedAt === null ? null : { at: startedAt, person: run?.startedBy ?? null },
         isEnd: false,
       });

@@ -22,19 +22,12 @@ interface Booking {
   undo(): void;
 }
 
-interface Missed {
-  activity: string;
-  wait: string | null;
-  lateMinutes: number;
-}
-
 class ForwardPass {
   private readonly ledger: Ledger;
   private readonly byId: Map<string, Activity>;
   private readonly placed = new Map<string, Placement>();
   /** Starts that were moved later for the sake of a maximum wait further on. */
   private readonly notBefore = new Map<string, Instant>();
-  private readonly missed = new Map<string, Missed>();
   private readonly unplanned: Plan['unplanned'] = [];
   private journal: Booking[] = [];
   /** Occupations of now whose end is not known yet. */
@@ -86,7 +79,7 @@ class ForwardPass {
         (a, b) => a.start - b.start || (a.activity < b.activity ? -1 : 1),
       ),
       unplanned: this.unplanned,
-      missedMaxima: [...this.missed.values()],
+      missedMaxima: this.missedMaxima(),
     };
   }
 
@@ -116,7 +109,7 @@ class ForwardPass {
     }
   }
 
-  /** Null when all is placed; else a start was moved later and the batch has to be laid again. */
+  /** Null when all is placed as well as it can be; else a start was moved later and the batch has to be laid again. */
   private layOnce(activities: readonly Activity[], acceptLate: boolean): true | null {
     const mark = this.journal.length;
     for (const activity of activities) {
@@ -137,13 +130,18 @@ class ForwardPass {
         this.notBefore.set(moved.activity, Math.max(to, this.notBefore.get(moved.activity) ?? 0));
         return true;
       }
-      this.missed.set(activity.id, {
-        activity: activity.id,
-        wait: late.wait,
-        lateMinutes: Math.ceil(late.milliseconds / MINUTE_MS),
-      });
     }
     return null;
+  }
+
+  /** Maxima that no order of the work could keep, with how late the work after them starts. */
+  private missedMaxima(): Plan['missedMaxima'] {
+    return this.problem.activities.flatMap((activity) => {
+      const late = this.placed.has(activity.id) ? this.lateBy(activity) : null;
+      if (!late) return [];
+      const lateMinutes = Math.ceil(late.milliseconds / MINUTE_MS);
+      return [{ activity: activity.id, wait: late.wait, lateMinutes }];
+    });
   }
 
   /** How much later than a maximum allows an activity starts, and the activity to move for it (null: a fact). */
@@ -294,7 +292,6 @@ class ForwardPass {
     for (const id of people) this.ledger.bookPerson(id, start, end);
     this.note(() => {
       this.placed.delete(activity.id);
-      this.missed.delete(activity.id);
       for (const id of people) this.ledger.bookPerson(id, start, end, -1);
     });
     for (const hold of this.openHolds) {

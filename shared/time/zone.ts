@@ -3,6 +3,8 @@ import { DAY_MS, MINUTE_MS, type Instant } from './instant';
 /** A local calendar date: 2026-12-01. */
 export type LocalDate = string;
 
+const QUARTER_MS = 15 * MINUTE_MS;
+
 const formats = new Map<string, Intl.DateTimeFormat>();
 const offsets = new Map<string, Map<number, number>>();
 
@@ -19,18 +21,25 @@ export function isZone(name: string): boolean {
 
 /** How far local time is ahead of UTC, in minutes (fractions for historic offsets with seconds). */
 export function offsetMinutes(zone: string, at: Instant): number {
-  // Offsets change on quarter hours at the finest, so one answer serves a quarter of an hour.
-  const slot = Math.floor(at / (15 * MINUTE_MS));
+  const day = Math.floor(at / DAY_MS);
+  const before = offsetAt(zone, day * DAY_MS);
+  // No zone changes its offset and changes it back within a day, so equal ends mean an unchanged day.
+  if (before === offsetAt(zone, (day + 1) * DAY_MS)) return before;
+  // Offsets change on quarter hours at the finest.
+  return offsetAt(zone, Math.floor(at / QUARTER_MS) * QUARTER_MS);
+}
+
+function offsetAt(zone: string, at: Instant): number {
   let known = offsets.get(zone);
   if (!known) {
     known = new Map();
     offsets.set(zone, known);
   }
-  let offset = known.get(slot);
+  let offset = known.get(at);
   if (offset === undefined) {
-    if (known.size > 100_000) known.clear();
-    offset = readOffset(zone, slot * 15 * MINUTE_MS);
-    known.set(slot, offset);
+    if (known.size > 50_000) known.clear();
+    offset = readOffset(zone, at);
+    known.set(at, offset);
   }
   return offset;
 }

@@ -77,7 +77,7 @@ describe('fullWords', () => {
   it('names what is full, who has it and until when', () => {
     const holder = { batchCode: 'CT-026', freeAt: minutes(64) };
     expect(fullWords({ ...full, holder }, ZONE, now)).toBe(
-      'glue bench full, CT-026 until about 15:10',
+      'glue bench full until about 15:10 (CT-026)',
     );
     expect(fullWords({ ...full, holder: { ...holder, freeAt: null } }, ZONE, now)).toBe(
       'glue bench full: CT-026 has it',

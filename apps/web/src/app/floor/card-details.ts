@@ -74,12 +74,12 @@ export function burned(hold: Pick<Hold, 'since' | 'clearAt'>, now: Instant): num
   return Math.min(100, Math.max(0, Math.round((100 * (now - hold.since)) / whole)));
 }
 
-/** "bench full until about 15:10": what keeps a step from starting, short enough for a card; null for other reasons. */
+/** "glue bench full until about 15:10 (CT-026)": what keeps a step from starting, short enough for a card; null for other reasons. */
 export function fullWords(refusal: Refusal, zone: string, now: Instant): string | null {
   if (refusal.code !== 'STATION_FULL' && refusal.code !== 'CLAMPS_FULL') return null;
   const what = refusal.code === 'STATION_FULL' ? `${refusal.station} full` : 'not enough clamps';
   const { holder } = refusal;
   if (holder === null) return what;
   if (holder.freeAt === null) return `${what}: ${holder.batchCode} has it`;
-  return `${what}, ${holder.batchCode} until about ${clockWords(zone, now, holder.freeAt)}`;
+  return `${what} until about ${clockWords(zone, now, holder.freeAt)} (${holder.batchCode})`;
 }

@@ -13,12 +13,14 @@ import { FloorStore } from './floor-store';
     @if (board.narrow()) {
       <button
         type="button"
-        class="ct-button"
+        class="ct-button toggle"
         aria-controls="filters"
+        [attr.aria-label]="isFiltered() ? 'Filter: some cards are left out' : 'Filter'"
         [attr.aria-expanded]="isOpen()"
+        [class.set]="isFiltered()"
         (click)="isOpen.set(!isOpen())"
       >
-        <app-icon name="filter" /> {{ isFiltered() ? 'Filtered' : 'Filter' }}
+        <app-icon name="filter" />
       </button>
     }
     @if (!board.narrow() || isOpen()) {
@@ -113,6 +115,10 @@ import { FloorStore } from './floor-store';
     }
     .bare {
       min-height: 40px;
+    }
+    .toggle {
+      min-width: 56px;
+      padding: 0;
     }
     .set {
       border-color: var(--ct-spruce);

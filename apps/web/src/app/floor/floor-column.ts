@@ -1,4 +1,4 @@
-import { CdkDrag, CdkDragPlaceholder, CdkDropList, type CdkDragDrop } from '@angular/cdk/drag-drop';
+import { CdkDrag, CdkDragPlaceholder, CdkDropList, type CdkDragEnd } from '@angular/cdk/drag-drop';
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import type { Place } from '#shared/route/route';
 import { placeWords } from '#shared/words/card-words';
@@ -71,17 +71,12 @@ export class FloorColumn {
     this.carry.lift(card);
   }
 
-  protected drop(event: CdkDragDrop<Place, Place, string>): void {
-    const { x, y } = event.dropPoint;
-    // A place that refuses never becomes the container, so it is looked up where the pointer let go.
+  /** The hand has let go. A place that refuses is never entered, so the place is looked up where the pointer is. */
+  protected ended({ dropPoint }: CdkDragEnd): void {
     const under = document
-      .elementsFromPoint(x, y)
+      .elementsFromPoint(dropPoint.x, dropPoint.y)
       .map((element) => element.closest('[data-place]')?.getAttribute('data-place'))
       .find((place) => place);
-    this.carry.letGo(COLUMNS.find((place) => place === under) ?? event.container.data);
-  }
-
-  protected ended(): void {
-    this.carry.cancel();
+    this.carry.letGo(COLUMNS.find((place) => place === under) ?? null);
   }
 }

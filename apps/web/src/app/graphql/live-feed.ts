@@ -71,8 +71,9 @@ export class LiveFeed {
     this.grace = setTimeout(() => void this.start(null), GRACE);
   }
 
-  /** Follows from the place at which a snapshot was read. */
-  resumeAt(cursor: string): void {
+  /** Follows from the place at which a snapshot was read; a snapshot that knows how many watch may say so. */
+  resumeAt(cursor: string, watchers?: number): void {
+    if (watchers !== undefined) this.watchersNow.set(watchers);
     if (this.following?.cursor() === cursor) return;
     void this.start(cursor);
   }
@@ -87,7 +88,8 @@ export class LiveFeed {
     this.following = null;
     const socket = this.socket;
     this.socket = null;
-    void socket?.then((client) => client.dispose());
+    // Disposing rejects when the socket it ends was still opening or already closing: it is ended either way.
+    socket?.then((client) => client.dispose()).catch(() => undefined);
     this.stateNow.set('off');
     this.sinceNow.set(null);
   }

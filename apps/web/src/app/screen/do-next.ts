@@ -10,6 +10,8 @@ import type { BoardBatch } from '../floor/floor-view';
 export const PRESSING_MINUTES = 120;
 /** Steps of one batch that are listed at most; more are done one after the other anyway. */
 const STEPS_EACH = 2;
+/** Pieces that are named one by one at most. */
+const MOST_NAMED = 3;
 
 export type Pressure = 'over' | 'pressing' | 'now' | 'later';
 
@@ -126,8 +128,7 @@ function isPressing(latestAt: Instant | null, now: Instant): boolean {
 function toRow(candidate: Candidate, zone: string, now: Instant): DoNextRow {
   const { batch, step, pieces, startAt, latestAt, people } = candidate;
   const { floor } = batch;
-  const all = pieces.length === piecesOf(floor, step.scope).length;
-  const on = piecesName(step.scope, pieces, all);
+  const on = piecesWords(step, pieces, piecesOf(floor, step.scope).length);
   const [verb = '', ...rest] = step.verb.split(' ');
   const what = [capital(verb), floor.code, on, ...rest].filter((word) => word !== '').join(' ');
   return {
@@ -138,6 +139,15 @@ function toRow(candidate: Candidate, zone: string, now: Instant): DoNextRow {
     people,
     ...whenWords(startAt, latestAt, zone, now),
   };
+}
+
+/** "panel 2", "panels 1 and 3", "both panels", "all 12 blocks"; many but not all are only counted. */
+function piecesWords(step: WorkStep, pieces: readonly number[], of: number): string {
+  if (pieces.length === of) {
+    return piecesName(step.scope, pieces, true).replace('all 2', 'both');
+  }
+  if (pieces.length <= MOST_NAMED) return piecesName(step.scope, pieces);
+  return `${pieces.length} ${step.scope === 'PANEL' ? 'panels' : 'blocks'}`;
 }
 
 function whenWords(

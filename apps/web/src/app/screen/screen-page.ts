@@ -28,7 +28,7 @@ import { stayAwake } from './stay-awake';
       color-scheme: dark;
       background: var(--ct-paper);
       color: var(--ct-ink);
-      font-size: clamp(15px, min(1.354vw, 2.41vh), 64px);
+      font-size: clamp(15px, min(1.5vw, 2.41vh), 64px);
     }
     @media (orientation: portrait) {
       :host {

@@ -62,12 +62,14 @@ export class ScreenPairing {
   protected readonly pairing = signal<StartPairingMutation['startPairing'] | null>(null);
   protected readonly failure = signal<string | null>(null);
   protected readonly address = location.host;
+  private readonly plainCode = computed(() => (this.pairing()?.code ?? '').replace(/\W/g, ''));
+  /** The code in two halves, as it is easiest to carry in one's head. */
   protected readonly halves = computed(() => {
-    const code = this.pairing()?.code ?? '';
+    const code = this.plainCode();
     const middle = Math.ceil(code.length / 2);
     return [code.slice(0, middle), code.slice(middle)] as const;
   });
-  protected readonly spelled = computed(() => [...(this.pairing()?.code ?? '')].join(' '));
+  protected readonly spelled = computed(() => [...this.plainCode()].join(' '));
   private readonly expiresAt = computed(() => Date.parse(this.pairing()?.expiresAt ?? ''));
   protected readonly left = computed(() => {
     const seconds = Math.max(0, Math.ceil((this.expiresAt() - this.clock.now()) / 1_000));

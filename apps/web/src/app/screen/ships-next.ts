@@ -1,5 +1,5 @@
 import { placeOf } from '#shared/floor/progress';
-import type { Instant } from '#shared/time/instant';
+import { DAY_MS, type Instant } from '#shared/time/instant';
 import { slackWords } from '#shared/words/card-words';
 import type { BoardBatch } from '../floor/floor-view';
 import { dateName, localDate } from '../ui/when';
@@ -30,15 +30,21 @@ export function shipsNext(
     .sort((a, b) => order(a.shipBy, b.shipBy) || order(slackOf(a.batch), slackOf(b.batch)))
     .map(({ batch, shipBy }) => {
       const isReady = placeOf(batch.floor, now) === 'READY';
-      const late = isReady ? shipBy < today : slackOf(batch) < 0;
       return {
         id: batch.floor.id,
         batch,
         day: dayWords(shipBy, today),
-        slack: isReady ? 'ready' : batch.forecast ? slackWords(batch.forecast) : '',
-        late,
+        slack: isReady ? 'ready' : forecastWords(batch, shipBy, today),
+        late: shipBy < today || (!isReady && slackOf(batch) < 0),
       };
     });
+}
+
+/** Without a forecast only a day that is over says something. */
+function forecastWords(batch: BoardBatch, shipBy: string, today: string): string {
+  if (batch.forecast) return slackWords(batch.forecast);
+  const days = daysBetween(shipBy, today);
+  return days > 0 ? `late by ${days} d` : '';
 }
 
 function slackOf(batch: BoardBatch): number {
@@ -48,9 +54,13 @@ function slackOf(batch: BoardBatch): number {
 /** A weekday alone is only clear within the six days after today. */
 function dayWords(date: string, today: string): string {
   if (date === today) return 'today';
-  const days = (Date.parse(date) - Date.parse(today)) / 86_400_000;
+  const days = daysBetween(today, date);
   const name = dateName(date, today);
   return days > 0 && days <= 6 ? name.slice(0, 3) : name;
+}
+
+function daysBetween(from: string, to: string): number {
+  return (Date.parse(to) - Date.parse(from)) / DAY_MS;
 }
 
 function order<T extends string | number>(a: T, b: T): number {

@@ -12,6 +12,7 @@ import {
 import { NonNullableFormBuilder, ReactiveFormsModule } from '@angular/forms';
 import { Apollo } from 'apollo-angular';
 import { firstValueFrom } from 'rxjs';
+import { freshKey } from '../floor/fresh-key';
 import { MakeBatchDocument, type OrderFieldsFragment } from '../graphql/generated/graphql';
 import { ServerClock } from '../graphql/server-clock';
 import { Session } from '../session/session';
@@ -129,7 +130,7 @@ export class LineBatch implements OnInit {
     const { id, designId } = this.line();
     const wanted = { designId, boards, dueDate, orderLineIds: [id] };
     const of = JSON.stringify(wanted);
-    if (this.attempt?.of !== of) this.attempt = { of, key: randomKey() };
+    if (this.attempt?.of !== of) this.attempt = { of, key: freshKey() };
     this.busy.set(true);
     try {
       const input = { ...wanted, idempotencyKey: this.attempt.key };
@@ -149,10 +150,4 @@ export class LineBatch implements OnInit {
       this.busy.set(false);
     }
   }
-}
-
-/** 128 random bits. `crypto.randomUUID` is not there on a tablet that comes over plain http. */
-function randomKey(): string {
-  const bytes = crypto.getRandomValues(new Uint8Array(16));
-  return [...bytes].map((byte) => byte.toString(16).padStart(2, '0')).join('');
 }

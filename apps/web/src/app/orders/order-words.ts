@@ -29,7 +29,7 @@ export function statusName(status: OrderStatus): string {
 export function statusMeaning(status: OrderStatus): string {
   switch (status) {
     case 'RECEIVED':
-      return 'No batch makes it yet.';
+      return 'No batch makes all of it yet.';
     case 'PLANNED':
       return 'Its batches wait in the queue.';
     case 'IN_WORK':

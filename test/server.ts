@@ -51,7 +51,7 @@ export async function startServer(
     await stop();
     throw error;
   }
-  return { url: `http://localhost:${port}`, port, pid: server.pid, stop };
+  return { url: `http://localhost:${port}`, port, pid: server.pid ?? 0, stop };
 }
 
 /** A run of `npm test` has built already, and says how that went: building again for each test would only take time. */

@@ -148,29 +148,33 @@ export const DEMO_DESIGNS: readonly DemoDesign[] = [
   },
 ];
 
-/** Batches as they enter the shop: design, boards, days before now they were let in (null: still queued), days to due. */
+/**
+ * Batches as they enter the shop: design, boards, days before now they were let in (null: still queued), days to due, and
+ * the step that nobody has come to yet where the crew would otherwise have gone on.
+ */
 export const DEMO_BATCHES: readonly {
   design: string;
   boards: number;
   entered: number | null;
   due: number | null;
+  stopBefore?: string;
 }[] = [
   { design: 'Field', boards: 8, entered: 14, due: -4 },
   { design: 'Checker', boards: 6, entered: 13, due: -3 },
-  { design: 'Drift', boards: 8, entered: 12.5, due: -2 },
+  { design: 'Drift', boards: 8, entered: 12.5, due: 2, stopBefore: 'final-check' },
   { design: 'Shoal', boards: 8, entered: 10, due: 1 },
-  { design: 'Ember', boards: 6, entered: 8, due: 3 },
-  { design: 'Drift', boards: 8, entered: 7, due: -1 },
-  { design: 'Field', boards: 6, entered: 6, due: 4 },
-  { design: 'Checker', boards: 4, entered: 5, due: 6 },
-  { design: 'Longshore', boards: 3, entered: 4, due: 2 },
-  { design: 'Ember', boards: 6, entered: 3, due: 7 },
-  { design: 'Shoal', boards: 6, entered: 2.2, due: 9 },
-  { design: 'Field', boards: 12, entered: 1.6, due: 8 },
+  { design: 'Ember', boards: 6, entered: 9, due: 5, stopBefore: 'oil-1' },
+  { design: 'Drift', boards: 8, entered: 8, due: -1, stopBefore: 'sand-120' },
+  { design: 'Field', boards: 6, entered: 6.5, due: 4, stopBefore: 'trim' },
+  { design: 'Checker', boards: 4, entered: 6, due: 6, stopBefore: 'fill' },
+  { design: 'Longshore', boards: 3, entered: 5, due: 4 },
+  { design: 'Ember', boards: 6, entered: 4, due: 7, stopBefore: 'flatten-2' },
+  { design: 'Shoal', boards: 6, entered: 2.2, due: 9, stopBefore: 'flatten-1' },
+  { design: 'Field', boards: 12, entered: 1.6, due: 8, stopBefore: 'glue-2' },
   { design: 'Drift', boards: 8, entered: 1.1, due: 10 },
   { design: 'Checker', boards: 10, entered: 0.7, due: 12 },
   { design: 'Ember', boards: 6, entered: 0.4, due: 11 },
-  { design: 'Field', boards: 8, entered: 0.15, due: 14 },
+  { design: 'Field', boards: 8, entered: 0.12, due: 14, stopBefore: 'rip' },
   { design: 'Shoal', boards: 10, entered: null, due: 15 },
   { design: 'Longshore', boards: 4, entered: null, due: 18 },
 ];

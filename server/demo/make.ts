@@ -21,7 +21,14 @@ import { designRow } from '#server/designs/create-design';
 import type { Services } from '#server/http/services';
 import { hashPassword } from '#server/secrets/password';
 import { newShopSettings } from '#server/session/sign-up';
-import { DEMO_BATCHES, DEMO_DESIGNS, DEMO_OTHERS, DEMO_OWNER, DEMO_PASSWORD } from './cast';
+import {
+  DEMO_BATCHES,
+  DEMO_DESIGNS,
+  DEMO_OTHERS,
+  DEMO_OWNER,
+  DEMO_PASSWORD,
+  type DemoPerson,
+} from './cast';
 import { makeOrders, type DemoLine } from './orders';
 import { simulateDays, type SimulatedBatch, type SimulatedDays } from './simulate';
 
@@ -47,59 +54,26 @@ const NANOMETRES = 1_000_000n;
 /** Makes the demo workshop: its people, designs, orders, and two weeks of work that ends now. */
 export async function makeDemo(services: Services, now: Date): Promise<void> {
   const shopId = newId(now.getTime());
-  const passwordHash = await hashPassword(DEMO_PASSWORD);
-  const people = await makePeople(services, shopId, passwordHash, now);
+  const people = [DEMO_OWNER, ...DEMO_OTHERS].map((person) => ({
+    ...person,
+    memberId: newId(now.getTime()),
+    personId: newId(now.getTime()),
+  }));
   const today = toLocal(HOURS.zone, now.getTime()).date;
+  const designs = designRows(shopId);
+  const steps = resolveRoute(
+    DEFAULT_ROUTE,
+    DEFAULT_GLUES[0] as GlueProfile,
+    DEFAULT_FINISHES[0] as FinishProfile,
+  );
+  const planned = plannedBatches(designs, steps, now, today);
+  // The days are lived before the database is touched: no transaction waits for them.
+  const days = liveDays(people, planned, now);
+  await makePeople(services, shopId, people, now);
   await services.doors.inShop(shopId, async (tx) => {
-    const designs = await makeDesigns(tx, shopId);
-    const steps = resolveRoute(
-      DEFAULT_ROUTE,
-      DEFAULT_GLUES[0] as GlueProfile,
-      DEFAULT_FINISHES[0] as FinishProfile,
-    );
+    await tx.insert(design).values(designs);
     const routeId = await copyRoute(tx, shopId, steps);
-    const planned = DEMO_BATCHES.map((made, index): SimulatedBatch & { designId: string } => {
-      const of = designs.get(made.design);
-      if (!of) throw new Error(`The demo has no design ${made.design}.`);
-      const due = made.due === null ? null : addDays(today, made.due);
-      return {
-        designId: of.id,
-        entersAt: made.entered === null ? null : now.getTime() - made.entered * DAY_MS,
-        shipsWhenReady: index < 2,
-        batch: {
-          id: newId(now.getTime()),
-          code: `CT-${String(index + 1).padStart(3, '0')}`,
-          version: 1,
-          boards: made.boards,
-          needs: of.needs,
-          route: { id: routeId, steps },
-          dueDate: due,
-          shipBy: due === null ? null : addDays(due, -2),
-          releasedAt: null,
-          shippedAt: null,
-          assignedTo: null,
-          runs: [],
-          occupations: [],
-          overrides: [],
-        },
-      };
-    });
-    const shop: FloorShop = {
-      zone: HOURS.zone,
-      stations: DEFAULT_STATIONS,
-      clamps: DEFAULT_CLAMPS,
-    };
-    const from = now.getTime() - DAYS_OF_HISTORY * DAY_MS;
-    const calendar = buildCalendar(HOURS, from, now.getTime() + HOUR_MS);
-    const days = simulateDays({
-      shop,
-      people: people.filter((person) => person.skills.length > 0),
-      batches: planned,
-      from,
-      now: now.getTime(),
-      isWorked: (at) => at > now.getTime() - ALWAYS_WORKED_MS || isOpen(calendar, at),
-    });
-    await storeDays(tx, shopId, now, planned, days, people[0]?.memberId ?? '');
+    await storeDays(tx, shopId, now, { planned, days, routeId, madeBy: people[0]?.memberId ?? '' });
     const lines = planned.map(({ batch: made, designId }): DemoLine => ({
       batchId: made.id,
       designId,
@@ -107,24 +81,86 @@ export async function makeDemo(services: Services, now: Date): Promise<void> {
       dueDate: made.dueDate,
       shipBy: made.shipBy,
     }));
-    await makeOrders(tx, shopId, now, today, lines, [...designs.values()]);
+    await makeOrders(tx, shopId, now, today, lines, designs);
     await makeReadings(tx, shopId, now);
   });
   services.hub.wake();
 }
 
+type DemoDesignRow = ReturnType<typeof designRows>[number];
+type PlannedBatch = SimulatedBatch & { designId: string };
+
+function plannedBatches(
+  designs: readonly DemoDesignRow[],
+  steps: ReturnType<typeof resolveRoute>,
+  now: Date,
+  today: string,
+): PlannedBatch[] {
+  return DEMO_BATCHES.map((made, index): PlannedBatch => {
+    const of = designs.find((candidate) => candidate.name === made.design);
+    if (!of) throw new Error(`The demo has no design ${made.design}.`);
+    const due = made.due === null ? null : addDays(today, made.due);
+    return {
+      designId: of.id,
+      entersAt: made.entered === null ? null : now.getTime() - made.entered * DAY_MS,
+      shipsWhenReady: index < 2,
+      stopBefore: made.stopBefore ?? null,
+      batch: {
+        id: newId(now.getTime()),
+        code: `CT-${String(index + 1).padStart(3, '0')}`,
+        version: 1,
+        boards: made.boards,
+        needs: {
+          panelCount: of.panelCount,
+          panelBoards: of.panelBoards,
+          blocksPerBoard: of.blocksPerBoard,
+          panelClamps: { count: of.panelClampCount, length: of.panelClampLength },
+          blockClamps: { count: of.blockClampCount, length: of.blockClampLength },
+        },
+        route: { id: '', steps },
+        dueDate: due,
+        shipBy: due === null ? null : addDays(due, -2),
+        releasedAt: null,
+        shippedAt: null,
+        assignedTo: null,
+        runs: [],
+        occupations: [],
+        overrides: [],
+      },
+    };
+  });
+}
+
+function liveDays(
+  people: readonly { memberId: string; roles: DemoPerson['roles']; skills: string[] }[],
+  planned: readonly PlannedBatch[],
+  now: Date,
+): SimulatedDays {
+  const shop: FloorShop = {
+    zone: HOURS.zone,
+    stations: DEFAULT_STATIONS,
+    clamps: DEFAULT_CLAMPS,
+  };
+  const from = now.getTime() - DAYS_OF_HISTORY * DAY_MS;
+  const calendar = buildCalendar(HOURS, from, now.getTime() + HOUR_MS);
+  return simulateDays({
+    shop,
+    people: people.filter((person) => person.skills.length > 0),
+    batches: planned,
+    from,
+    now: now.getTime(),
+    isWorked: (at) => at > now.getTime() - ALWAYS_WORKED_MS || isOpen(calendar, at),
+  });
+}
+
 async function makePeople(
   services: Services,
   shopId: string,
-  passwordHash: string,
+  cast: readonly (DemoPerson & { memberId: string; personId: string })[],
   now: Date,
-): Promise<{ memberId: string; roles: (typeof DEMO_OWNER)['roles']; skills: string[] }[]> {
+): Promise<void> {
   const { doors } = services;
-  const cast = [DEMO_OWNER, ...DEMO_OTHERS].map((person) => ({
-    ...person,
-    memberId: newId(now.getTime()),
-    personId: newId(now.getTime()),
-  }));
+  const passwordHash = await hashPassword(DEMO_PASSWORD);
   const [owner, ...others] = cast;
   if (!owner) throw new Error('The demo has no owner.');
   const [made] = await doors.entry<{ made: boolean }>(
@@ -173,11 +209,10 @@ async function makePeople(
       })),
     ),
   );
-  return cast.map(({ memberId, roles, skills }) => ({ memberId, roles, skills }));
 }
 
-async function makeDesigns(tx: ShopTransaction, shopId: string) {
-  const made = DEMO_DESIGNS.map((each) => ({
+function designRows(shopId: string) {
+  return DEMO_DESIGNS.map((each) => ({
     shopId,
     id: newId(),
     ...designRow({
@@ -197,22 +232,6 @@ async function makeDesigns(tx: ShopTransaction, shopId: string) {
       blockClampCount: each.blockClampCount,
     }),
   }));
-  await tx.insert(design).values(made);
-  return new Map(
-    made.map((row) => [
-      row.name,
-      {
-        id: row.id,
-        needs: {
-          panelCount: row.panelCount,
-          panelBoards: row.panelBoards,
-          blocksPerBoard: row.blocksPerBoard,
-          panelClamps: { count: row.panelClampCount, length: row.panelClampLength },
-          blockClamps: { count: row.blockClampCount, length: row.blockClampLength },
-        },
-      },
-    ]),
-  );
 }
 
 /** Writes what the simulated days left: rows as they are now, and the events that led there. */
@@ -220,10 +239,14 @@ async function storeDays(
   tx: ShopTransaction,
   shopId: string,
   now: Date,
-  planned: readonly (SimulatedBatch & { designId: string })[],
-  days: SimulatedDays,
-  madeBy: string,
+  lived: {
+    planned: readonly PlannedBatch[];
+    days: SimulatedDays;
+    routeId: string;
+    madeBy: string;
+  },
 ): Promise<void> {
+  const { planned, days, routeId, madeBy } = lived;
   const designOf = new Map(planned.map((each) => [each.batch.id, each.designId]));
   const madeAt = new Map(
     planned.map((each) => [
@@ -239,7 +262,7 @@ async function storeDays(
       version: made.version,
       code: made.code,
       designId: designOf.get(made.id) ?? '',
-      routeId: made.route.id,
+      routeId,
       boards: made.boards,
       dueDate: made.dueDate,
       shipBy: made.shipBy,

@@ -25,6 +25,8 @@ export interface SimulatedBatch {
   batch: FloorBatch;
   entersAt: Instant | null;
   shipsWhenReady: boolean;
+  /** The step that the crew has not come to yet; null for as far as they get. */
+  stopBefore: string | null;
 }
 
 export interface SimulatedEvent {
@@ -59,6 +61,7 @@ export function simulateDays(given: {
   const { shop, people, from, now, isWorked } = given;
   let batches = given.batches.map(({ batch }) => batch);
   const events: SimulatedEvent[] = [];
+  const stops = new Map(given.batches.map((each) => [each.batch.id, each.stopBefore]));
   const busy = new Map<
     string,
     { batchId: string; step: string; pieces: number[]; until: Instant }
@@ -111,7 +114,7 @@ export function simulateDays(given: {
         give(task.batchId, step('FINISH', task.step, task.pieces), person, at);
         busy.delete(person.memberId);
       }
-      const taken = takeWork(batches, person, at, (batch, action, pieces) =>
+      const taken = takeWork(batches, stops, person, at, (batch, action, pieces) =>
         give(batch.id, step('START', action.step.key, pieces), person, at),
       );
       if (taken) busy.set(person.memberId, taken);
@@ -123,6 +126,7 @@ export function simulateDays(given: {
 /** The first work that a person can take: what runs out soonest first, then what is due first. */
 function takeWork(
   batches: readonly FloorBatch[],
+  stops: ReadonlyMap<string, string | null>,
   person: SimulatedPerson,
   at: Instant,
   start: (batch: FloorBatch, action: NextAction, pieces: number[]) => boolean,
@@ -132,9 +136,12 @@ function takeWork(
     .sort((a, b) => ((a.shipBy ?? '9') < (b.shipBy ?? '9') ? -1 : 1));
   for (const batch of open) {
     const tried = new Set<string>();
+    const order = batch.route.steps.map((each) => each.key);
+    const stop = order.indexOf(stops.get(batch.id) ?? '');
     for (const action of cardOf(batch, at).actions) {
       if (action.kind !== 'START' || tried.has(action.step.key)) continue;
       tried.add(action.step.key);
+      if (stop >= 0 && order.indexOf(action.step.key) >= stop) continue;
       if (action.step.skill !== null && !person.skills.includes(action.step.skill)) continue;
       const startable = piecesOf(batch, action.step.scope).filter(
         (piece) => runOf(batch, action.step.key, piece)?.startedAt == null,

@@ -1,7 +1,7 @@
 import { MINUTE_MS, type Instant } from '#shared/time/instant';
 import type { FloorBatch, Hold, StepRun } from './model';
 import { piecesOf, relatedPieces } from './pieces';
-import type { Place, RouteStep, WaitStep, WorkStep } from '#shared/route/route';
+import type { Place, RouteStep, StepScope, WaitStep, WorkStep } from '#shared/route/route';
 
 const runIndex = new WeakMap<FloorBatch, Map<string, StepRun>>();
 
@@ -59,16 +59,32 @@ export function isDone(batch: FloorBatch, step: RouteStep, piece: number, at: In
   return wait !== null && wait.clearAt <= at;
 }
 
+/**
+ * How far each piece has come: by scope and piece, the index of its first step of that scope that is not done. Kept for
+ * the last instant asked, since a card asks many times for one.
+ */
+function frontierOf(batch: FloorBatch, at: Instant): Map<string, number> {
+  const kept = frontiers.get(batch);
+  if (kept?.at === at) return kept.first;
+  const first = new Map<string, number>();
+  batch.route.steps.forEach((step, index) => {
+    for (const piece of piecesOf(batch, step.scope)) {
+      const key = `${step.scope}/${piece}`;
+      if (!first.has(key) && !isDone(batch, step, piece, at)) first.set(key, index);
+    }
+  });
+  frontiers.set(batch, { at, first });
+  return first;
+}
+
+const frontiers = new WeakMap<FloorBatch, { at: Instant; first: Map<string, number> }>();
+
 /** Where the batch stands at an instant: the stage of its least advanced piece. */
 export function placeOf(batch: FloorBatch, at: Instant): Place {
   if (batch.shippedAt !== null) return 'SHIPPED';
   if (batch.releasedAt === null) return 'QUEUED';
-  for (const step of batch.route.steps) {
-    for (const piece of piecesOf(batch, step.scope)) {
-      if (!isDone(batch, step, piece, at)) return step.stage;
-    }
-  }
-  return 'READY';
+  const least = Math.min(...frontierOf(batch, at).values());
+  return batch.route.steps[least]?.stage ?? 'READY';
 }
 
 /** The holds that run on the batch at an instant, the first to clear first. FRESHNESS holds nothing and is left out. */
@@ -129,13 +145,24 @@ export function firstUndoneBefore(
 ): { step: RouteStep; piece: number } | null {
   const target = batch.route.steps[index];
   if (!target) return null;
-  for (const step of batch.route.steps.slice(0, index)) {
-    for (const related of relatedPieces(batch, step.scope, target.scope, piece)) {
-      if (!isDone(batch, step, related, at)) return { step, piece: related };
+  const frontier = frontierOf(batch, at);
+  let least = index;
+  let on = 0;
+  for (const scope of SCOPES) {
+    const from = batch.route.steps.findIndex((step) => step.scope === scope);
+    if (from < 0 || from >= index) continue;
+    for (const related of relatedPieces(batch, scope, target.scope, piece)) {
+      const undone = frontier.get(`${scope}/${related}`) ?? Infinity;
+      if (undone >= least) continue;
+      least = undone;
+      on = related;
     }
   }
-  return null;
+  const step = least < index ? batch.route.steps[least] : undefined;
+  return step ? { step, piece: on } : null;
 }
+
+const SCOPES: readonly StepScope[] = ['BATCH', 'PANEL', 'BLOCK'];
 
 /** Working minutes that a step takes on a piece by the shop's standard times. */
 export function standardMinutes(batch: FloorBatch, step: WorkStep): number {

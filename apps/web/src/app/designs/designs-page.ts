@@ -13,6 +13,9 @@ import { Swatch } from '../ui/swatch';
 import { clampWords, panelWords, sizeWords, stripWords } from './design-words';
 import { NewDesign } from './new-design';
 
+/** Pixels that a board is drawn high at most. */
+const FACE_HEIGHT = 168;
+
 /** The boards that the shop makes. */
 @Component({
   selector: 'app-designs-page',
@@ -34,6 +37,7 @@ export class DesignsPage {
   protected readonly mayEdit = computed(() => this.session.may('editDesigns'));
   protected readonly unit = computed(() => this.session.viewer()?.shop.lengthUnit ?? 'MILLIMETRE');
   protected readonly skeletons = [1, 2, 3, 4, 5, 6];
+  protected readonly faceHeight = FACE_HEIGHT;
   protected readonly sizeWords = sizeWords;
   protected readonly stripWords = stripWords;
   protected readonly panelWords = panelWords;
@@ -58,6 +62,11 @@ export class DesignsPage {
     } catch {
       this.failed.set(this.designs() === null);
     }
+  }
+
+  /** The finished board's length against its width. */
+  protected proportion(design: DesignFieldsFragment): number {
+    return Number(design.length) / Number(design.width);
   }
 
   protected designMade(design: DesignFieldsFragment): void {

@@ -174,7 +174,7 @@ export const DEMO_BATCHES: readonly {
   { design: 'Drift', boards: 8, entered: 1.1, due: 10 },
   { design: 'Checker', boards: 10, entered: 0.7, due: 12 },
   { design: 'Ember', boards: 6, entered: 0.4, due: 11 },
-  { design: 'Field', boards: 8, entered: 0.12, due: 14, stopBefore: 'rip' },
+  { design: 'Field', boards: 8, entered: 0.035, due: 14, stopBefore: 'rip' },
   { design: 'Shoal', boards: 10, entered: null, due: 15 },
   { design: 'Longshore', boards: 4, entered: null, due: 18 },
 ];

@@ -1,6 +1,7 @@
 import { eq } from 'drizzle-orm';
 import { design } from '#drizzle/tables/design';
 import { designSchema, type NewDesign } from '#shared/designs/design-schema';
+import { problemSentence } from '#shared/words/problem-words';
 import { appendEvent } from '#server/db/events';
 import { newId } from '#server/db/uuid';
 import type { DesignInput, DesignPayload } from '#server/generated/schema';
@@ -33,7 +34,7 @@ export async function createDesign(context: Context, input: DesignInput): Promis
     return true;
   });
   if (!made) {
-    return refused([problem('NAME_TAKEN', 'Another design has this name.', 'name')]);
+    return refused([problem('NAME_TAKEN', problemSentence({ code: 'NAME_TAKEN' }), 'name')]);
   }
   services.hub.wake();
   await context.forget();

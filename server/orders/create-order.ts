@@ -115,7 +115,7 @@ async function readLines(tx: ShopTransaction, wanted: NewOrder) {
   asked.forEach(({ designId, count }, index) => {
     if (designId !== null && known.has(designId)) lines.push({ designId, count });
     else {
-      const sentence = 'This design is not there. Choose another.';
+      const sentence = problemSentence({ code: 'NOT_FOUND' });
       problems.push(problem('NOT_FOUND', sentence, `lines.${index}.designId`));
     }
   });

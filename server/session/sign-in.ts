@@ -39,9 +39,7 @@ export async function signIn(
   await services.doors.entry('select entry.forget_failures($1)', [email]);
   const [into] = await membershipsOf(services, attempt.person_id);
   if (!into) {
-    const sentence =
-      'You belong to no shop any more. Ask its owner, or sign up for one of your own.';
-    return { problems: [problem('NO_SHOP', sentence)] };
+    return { problems: [problem('NO_SHOP', problemSentence({ code: 'NO_SHOP' }))] };
   }
   return openSession(context, { id: attempt.person_id, email }, into);
 }

@@ -8,6 +8,7 @@ import {
   DEFAULT_STATIONS,
   DEFAULT_WEEKLY,
 } from '#shared/shop/defaults';
+import { problemSentence } from '#shared/words/problem-words';
 import type { Role } from '#shared/members/permissions';
 import { newId } from '#server/db/uuid';
 import type { SignInPayload, SignUpInput } from '#server/generated/schema';
@@ -47,7 +48,7 @@ export async function signUp(context: Context, input: SignUpInput): Promise<Sign
     ],
   );
   if (!made?.made) {
-    const sentence = 'Someone has signed up with this address. Sign in instead.';
+    const sentence = problemSentence({ code: 'EMAIL_TAKEN' });
     return { problems: [problem('EMAIL_TAKEN', sentence, 'email')] };
   }
   const into = { shopId: shop.id, name: shopName, memberId: owner.id, roles: owner.roles };

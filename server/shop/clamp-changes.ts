@@ -1,6 +1,7 @@
 import type { Clamps } from '#shared/shop/clamps-schema';
 import { MILLIMETRE } from '#shared/length/length';
 import type { ClampClass } from '#shared/floor/model';
+import { problemSentence, type GeneralProblem } from '#shared/words/problem-words';
 import { problem, type Problem } from '#server/http/problem';
 
 export type ClampChanges =
@@ -17,8 +18,8 @@ export function clampChanges(
   inUse: ReadonlyMap<string, number>,
 ): ClampChanges {
   const problems: Problem[] = [];
-  const refuse = (field: string, sentence: string) =>
-    problems.push(problem('CLAMPS_IN_USE', sentence, field));
+  const refuse = (field: string, why: Extract<GeneralProblem, { code: 'CLAMPS_IN_USE' }>) =>
+    problems.push(problem(why.code, problemSentence(why), field));
   const keys = new Set(current.map((each) => each.key));
   const keep: ClampClass[] = [];
   const fresh: ClampClass[] = [];
@@ -31,16 +32,16 @@ export function clampChanges(
     }
     const before = current.find((each) => each.key === key);
     if (!before) {
-      const sentence = 'This class is not there any more. Read the page again.';
+      const sentence = problemSentence({ code: 'NOT_FOUND' });
       problems.push(problem('NOT_FOUND', sentence, `clamps.${index}.key`));
       return;
     }
     const used = inUse.get(key) ?? 0;
+    const inUseNow = { code: 'CLAMPS_IN_USE', count: used } as const;
     if (used > 0 && before.length !== length) {
-      refuse(`clamps.${index}.length`, `${inClamps(used)}, so their length stays as it is.`);
+      refuse(`clamps.${index}.length`, { ...inUseNow, change: 'LENGTH' });
     }
-    if (count < used)
-      refuse(`clamps.${index}.count`, `${inClamps(used)}, so keep at least ${used}.`);
+    if (count < used) refuse(`clamps.${index}.count`, { ...inUseNow, change: 'COUNT' });
     keep.push({ key, length, count });
   });
   const remove = current
@@ -49,22 +50,25 @@ export function clampChanges(
   for (const key of remove) {
     const used = inUse.get(key) ?? 0;
     const length = current.find((each) => each.key === key)?.length ?? 0n;
-    if (used > 0) refuse('clamps', `${inClamps(used)} of ${millimetres(length)}, so they stay.`);
+    if (used > 0) {
+      refuse('clamps', {
+        code: 'CLAMPS_IN_USE',
+        count: used,
+        change: 'REMOVAL',
+        millimetres: wholeMillimetres(length),
+      });
+    }
   }
   return problems.length > 0 ? { ok: false, problems } : { ok: true, keep, add: fresh, remove };
 }
 
-function inClamps(count: number): string {
-  return count === 1 ? '1 clamp is on a piece now' : `${count} clamps are on pieces now`;
-}
-
-function millimetres(length: bigint): string {
-  return `${(length + MILLIMETRE / 2n) / MILLIMETRE} mm`;
+function wholeMillimetres(length: bigint): string {
+  return `${(length + MILLIMETRE / 2n) / MILLIMETRE}`;
 }
 
 /** A key that says the length in millimetres, such as c600; with a number behind it when that is taken. */
 function freeKey(length: bigint, taken: ReadonlySet<string>): string {
-  const key = `c${(length + MILLIMETRE / 2n) / MILLIMETRE}`;
+  const key = `c${wholeMillimetres(length)}`;
   let number = 1;
   while (taken.has(number === 1 ? key : `${key}-${number}`)) number++;
   return number === 1 ? key : `${key}-${number}`;

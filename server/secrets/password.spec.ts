@@ -10,7 +10,8 @@ describe('passwords', () => {
   });
 
   it('match nothing where there is no hash', async () => {
-    expect(await passwordMatches('nobody has this password', null)).toBe(false);
+    expect(await passwordMatches('tide and clamps', null)).toBe(false);
+    expect(await passwordMatches('', null)).toBe(false);
   });
 
   it('are all answered, however many come at once', async () => {

@@ -693,7 +693,7 @@ export type OrderPage = {
   nodes: Array<Order>;
   /** Whether there are more. */
   pageInfo: PageInfo;
-  /** How many there are in all. */
+  /** How many there are in all. With a status other than SHIPPED: how many of the first 500 open orders have it. */
   totalCount: Scalars['Int']['output'];
 };
 
@@ -870,7 +870,7 @@ export type Query = {
   now: Scalars['DateTime']['output'];
   /** One order by its code or, for an API client, null when it is not there. */
   order?: Maybe<Order>;
-  /** Orders by due date, 1 to 100 at a time. */
+  /** Orders by due date, 1 to 100 at a time. A status other than SHIPPED is looked for in the first 500 open orders. */
   orders: OrderPage;
   /** The latest plan; null when none was made yet. */
   plan?: Maybe<Plan>;

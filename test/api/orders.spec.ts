@@ -1,3 +1,4 @@
+import pg from 'pg';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { startApiServer, type ApiServer } from '../factories/api-server';
 import { newOwner, type Person } from '../factories/people';
@@ -238,21 +239,7 @@ describe('reading orders', () => {
       await newBatch(caller, { designId: design, boards: 2, orderLineIds: [order.lines[0]?.id] });
     };
     const queries = async (first: number) => {
-      const pool = await import('pg');
-      const spied = pool.default.Client.prototype;
-      const original = spied.query;
-      let count = 0;
-      spied.query = function (this: unknown, ...args: unknown[]) {
-        const text = typeof args[0] === 'string' ? args[0] : (args[0] as { text?: string }).text;
-        if (
-          /from "shop_order"|from "order_line"|from "line_batch"|from "batch"|from "step_run"/.test(
-            text ?? '',
-          )
-        ) {
-          count += 1;
-        }
-        return (original as (...all: unknown[]) => unknown).apply(this, args);
-      } as never;
+      const counting = countTransactions(/from "shop_order"/);
       try {
         const answer = await caller.get<Page>(
           `query ($first: Int) { orders(first: $first) {
@@ -261,10 +248,11 @@ describe('reading orders', () => {
           { first },
         );
         expect(answer.orders.nodes).toHaveLength(first);
+        expect(counting.lengths).toHaveLength(1);
+        return counting.lengths[0] ?? 0;
       } finally {
-        spied.query = original;
+        counting.stop();
       }
-      return count;
     };
     for (let n = 0; n < 12; n++) await make();
     const few = await queries(2);
@@ -272,6 +260,34 @@ describe('reading orders', () => {
     expect(await queries(12)).toBe(few);
   });
 });
+
+/** Counts the statements of each transaction that asks for something, whatever the background does meanwhile. */
+function countTransactions(of: RegExp): { lengths: number[]; stop(): void } {
+  const prototype = pg.Client.prototype as { query: (...args: unknown[]) => unknown };
+  const original = prototype.query;
+  const open = new WeakMap<object, { statements: number; asks: boolean }>();
+  const lengths: number[] = [];
+  prototype.query = function (this: object, ...args: unknown[]) {
+    const [first] = args;
+    const text = typeof first === 'string' ? first : String((first as { text?: string }).text);
+    const current = open.get(this);
+    if (text.startsWith('begin')) open.set(this, { statements: 0, asks: false });
+    else if (current && text === 'commit') {
+      if (current.asks) lengths.push(current.statements);
+      open.delete(this);
+    } else if (current) {
+      current.statements += 1;
+      current.asks ||= of.test(text);
+    }
+    return original.apply(this, args);
+  };
+  return {
+    lengths,
+    stop: () => {
+      prototype.query = original;
+    },
+  };
+}
 
 async function memberOf(caller: Person['caller']): Promise<string> {
   const { viewer } = await caller.get<{ viewer: { member: { id: string } } }>(

@@ -4,7 +4,7 @@ import {
   computed,
   inject,
   input,
-  OnInit,
+  type OnInit,
   output,
   signal,
   viewChild,

@@ -1,40 +1,61 @@
 import type { FloorView } from '#shared/floor/judge';
 import type { Actor, FloorBatch, Hold } from '#shared/floor/model';
 import { relatedPieces } from '#shared/floor/pieces';
-import { stepAt } from '#shared/route/route';
-import { holdWords, pieceName } from '#shared/words/card-words';
-import { overrideCautions, type Overridable } from './drop-verdict';
+import { stepAt, type WorkStep } from '#shared/route/route';
+import { holdWords, pieceName, placeWords } from '#shared/words/card-words';
+import { moveTo, overrideCautions, type Overridable } from './drop-verdict';
 
-/** A hold that this person may cut short, with the command that does it: starting the work that the hold keeps back. */
+/** Holds that this person may cut short with one command, and the command that does it. */
 export interface OverrideOffer {
   readonly words: string;
-  readonly hold: Hold;
   readonly command: Overridable;
 }
 
-/** Which of the running holds may be overridden just now. */
+/**
+ * Which of the running holds may be overridden just now: by starting the work they keep back or, where its station is
+ * full, by moving the batch to that work. Holds that keep the same work back are one offer.
+ */
 export function overridesOf(
   view: FloorView,
   batch: FloorBatch,
   holds: readonly Hold[],
   actor: Actor,
 ): OverrideOffer[] {
-  return holds.flatMap((hold) => {
+  const together = new Map<string, { next: WorkStep; pieces: number[]; holds: Hold[] }>();
+  for (const hold of holds) {
     const at = stepAt(batch.route, hold.step);
-    if (!at) return [];
-    const next = batch.route.steps.slice(at.index + 1).find((step) => step.kind === 'WORK');
-    if (!next) return [];
+    const next = batch.route.steps.slice((at?.index ?? 0) + 1).find((step) => step.kind === 'WORK');
+    if (!at || next?.kind !== 'WORK') continue;
     const pieces = relatedPieces(batch, next.scope, at.step.scope, hold.piece).slice(0, 1);
-    const command: Overridable = {
+    const key = `${next.key}/${pieces.join()}`;
+    const known = together.get(key);
+    if (known) known.holds.push(hold);
+    else together.set(key, { next, pieces, holds: [hold] });
+  }
+  return [...together.values()].flatMap(({ next, pieces, holds: kept }): OverrideOffer[] => {
+    const start: Overridable = {
       kind: 'START',
       step: next.key,
       pieces,
       happenedAt: null,
       override: null,
     };
-    if (overrideCautions(view, batch, command, actor) === null) return [];
-    const piece = pieceName(at.step.scope, hold.piece);
-    const on = piece === '' ? holdWords(hold.kind) : `${piece} ${holdWords(hold.kind)}`;
-    return [{ hold, command, words: `Override the hold (${on}): start ${next.name} …` }];
+    const what = heldWords(batch, kept);
+    if (overrideCautions(view, batch, start, actor) !== null) {
+      return [{ command: start, words: `Override the hold (${what}): start ${next.name} …` }];
+    }
+    const move = moveTo(next.stage);
+    if (overrideCautions(view, batch, move, actor) === null) return [];
+    const words = `Override the hold (${what}): move to ${placeWords(next.stage)} …`;
+    return [{ command: move, words }];
   });
+}
+
+/** "panel 2 in clamps", "6 curing". */
+function heldWords(batch: FloorBatch, holds: readonly Hold[]): string {
+  const [hold] = holds;
+  if (!hold) return '';
+  if (holds.length > 1) return `${holds.length} ${holdWords(hold.kind)}`;
+  const piece = pieceName(stepAt(batch.route, hold.step)?.step.scope ?? 'BATCH', hold.piece);
+  return piece === '' ? holdWords(hold.kind) : `${piece} ${holdWords(hold.kind)}`;
 }

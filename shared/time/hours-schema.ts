@@ -3,11 +3,14 @@ import { isLocalDate } from './zone';
 
 const MINUTES_OF_A_DAY = 24 * 60;
 
+const minuteSchema = z
+  .number('Give a time of day, like 07:30.')
+  .int('Times are to the minute.')
+  .min(0, 'A day begins at 00:00.')
+  .max(MINUTES_OF_A_DAY, 'A day ends at 24:00.');
+
 const spanSchema = z
-  .object({
-    from: z.number().int().min(0, 'A day begins at 00:00.').max(MINUTES_OF_A_DAY),
-    to: z.number().int().min(0).max(MINUTES_OF_A_DAY, 'A day ends at 24:00.'),
-  })
+  .object({ from: minuteSchema, to: minuteSchema })
   .refine((span) => span.from < span.to, 'Work must end after it begins, on the same day.');
 
 /** Spans of one day: in order, none over another, six at most. */
@@ -25,7 +28,7 @@ export const weeklySchema = z.array(spansSchema).length(7, 'A week has seven day
 export const exceptionsSchema = z
   .array(
     z.object({
-      date: z.string().refine(isLocalDate, 'This is not a date.'),
+      date: z.string('This is not a date.').refine(isLocalDate, 'This is not a date.'),
       spans: spansSchema,
       reason: z.string().trim().max(60, 'Keep the reason under 60 characters.').optional(),
     }),

@@ -1,17 +1,18 @@
 import { DAY_MS, MINUTE_MS, type Instant } from './instant';
+import { changeBetween, clockFormat, offsetMs } from './offset';
 
-/** A local calendar date: 2026-12-01. */
+/** A local calendar date: 2026-12-01. Arithmetic is for the years 1000 to 9999. */
 export type LocalDate = string;
 
-const QUARTER_MS = 15 * MINUTE_MS;
+/** A time on the wall, to the minute: 07:30. */
+export type LocalTime = string;
 
-const formats = new Map<string, Intl.DateTimeFormat>();
-const offsets = new Map<string, Map<number, number>>();
-
-/** Whether a name is a zone of the IANA database. */
+/** Whether a name is a zone of the IANA database. A bare offset (+01:00) is none: it has no seasons. */
 export function isZone(name: string): boolean {
+  if (!/^[A-Za-z]/.test(name)) return false;
   try {
-    formatFor(name);
+    // Not remembered: names come from strangers, and each formatter weighs kilobytes.
+    clockFormat(name);
     return true;
   } catch {
     // Intl throws a RangeError for a name it does not know.
@@ -19,37 +20,17 @@ export function isZone(name: string): boolean {
   }
 }
 
-/** How far local time is ahead of UTC, in minutes (fractions for historic offsets with seconds). */
+/** How far local time is ahead of UTC, in minutes (a fraction where a historic offset has seconds). */
 export function offsetMinutes(zone: string, at: Instant): number {
-  const day = Math.floor(at / DAY_MS);
-  const before = offsetAt(zone, day * DAY_MS);
-  // No zone changes its offset and changes it back within a day, so equal ends mean an unchanged day.
-  if (before === offsetAt(zone, (day + 1) * DAY_MS)) return before;
-  // Offsets change on quarter hours at the finest.
-  return offsetAt(zone, Math.floor(at / QUARTER_MS) * QUARTER_MS);
-}
-
-function offsetAt(zone: string, at: Instant): number {
-  let known = offsets.get(zone);
-  if (!known) {
-    known = new Map();
-    offsets.set(zone, known);
-  }
-  let offset = known.get(at);
-  if (offset === undefined) {
-    if (known.size > 50_000) known.clear();
-    offset = readOffset(zone, at);
-    known.set(at, offset);
-  }
-  return offset;
+  return offsetMs(zone, at) / MINUTE_MS;
 }
 
 /** An instant on the wall of a zone: date, clock, weekday (1 Monday to 7 Sunday) and minute of the day by the clock. */
 export function toLocal(
   zone: string,
   at: Instant,
-): { date: LocalDate; time: string; weekday: number; minuteOfDay: number } {
-  const local = new Date(at + offsetMinutes(zone, at) * MINUTE_MS);
+): { date: LocalDate; time: LocalTime; weekday: number; minuteOfDay: number } {
+  const local = new Date(at + offsetMs(zone, at));
   const iso = local.toISOString();
   return {
     date: iso.slice(0, 10),
@@ -60,66 +41,61 @@ export function toLocal(
 }
 
 /**
- * The instant at which the clock of a zone shows a minute of a date (0 to 1440). A time that is skipped counts as the
- * same length after the skip began; of a time that comes twice it is the first.
+ * The instant at which the clock of a zone shows a minute of a date (0 to 1440). A time that is skipped moves forward by
+ * the length of the skip (02:30 becomes 03:30); of a time that comes twice it is the first. RangeError for no date.
  */
 export function toInstant(zone: string, date: LocalDate, minuteOfDay: number): Instant {
-  const wall = Date.parse(`${date}T00:00:00Z`) + minuteOfDay * MINUTE_MS;
-  const before = offsetMinutes(zone, wall - DAY_MS);
-  const after = offsetMinutes(zone, wall + DAY_MS);
-  const early = wall - Math.max(before, after) * MINUTE_MS;
-  const late = wall - Math.min(before, after) * MINUTE_MS;
-  for (const at of [early, late]) {
-    if (at + offsetMinutes(zone, at) * MINUTE_MS === wall) return at;
-  }
-  // Skipped: the offset from before the skip carries over it.
-  return wall - before * MINUTE_MS;
+  const wall = midnightUtc(date) + minuteOfDay * MINUTE_MS;
+  return instantOf(zone, wall) ?? wall - offsetMs(zone, wall - DAY_MS);
 }
 
-/** The date n days later (earlier when negative). */
+/**
+ * The first instant at which the clock of a zone shows a minute of a date or, where that is skipped, anything later: the
+ * moment of the skip. Unlike `toInstant` it never turns two times of a day around, so it bounds spans of time.
+ */
+export function whenReached(zone: string, date: LocalDate, minuteOfDay: number): Instant {
+  const wall = midnightUtc(date) + minuteOfDay * MINUTE_MS;
+  const shown = instantOf(zone, wall);
+  if (shown !== null) return shown;
+  const [before, after] = [offsetMs(zone, wall - DAY_MS), offsetMs(zone, wall + DAY_MS)];
+  return changeBetween(zone, wall - after, wall - before);
+}
+
+/** The date n days later (earlier when negative). RangeError when that is past the year 9999. */
 export function addDays(date: LocalDate, n: number): LocalDate {
-  return new Date(Date.parse(`${date}T00:00:00Z`) + n * DAY_MS).toISOString().slice(0, 10);
+  const iso = new Date(midnightUtc(date) + n * DAY_MS).toISOString();
+  if (iso.length > 24) throw new RangeError(`No date: ${date} and ${n} days`);
+  return iso.slice(0, 10);
 }
 
-/** Calendar days from a to b. */
+/** Calendar days from a to b; negative when b is before a. */
 export function daysBetween(a: LocalDate, b: LocalDate): number {
-  return Math.round((Date.parse(`${b}T00:00:00Z`) - Date.parse(`${a}T00:00:00Z`)) / DAY_MS);
+  return Math.round((midnightUtc(b) - midnightUtc(a)) / DAY_MS);
 }
 
 /** 1 Monday to 7 Sunday. */
 export function weekdayOf(date: LocalDate): number {
-  return new Date(`${date}T00:00:00Z`).getUTCDay() || 7;
+  return new Date(midnightUtc(date)).getUTCDay() || 7;
 }
 
-/** Whether a text is a date that exists. */
+/** Whether a text is a date that exists, in the years 1000 to 9999. */
 export function isLocalDate(text: string): boolean {
-  if (!/^\d{4}-\d\d-\d\d$/.test(text)) return false;
-  const at = Date.parse(`${text}T00:00:00Z`);
+  if (!/^[1-9]\d{3}-\d\d-\d\d$/.test(text)) return false;
+  const at = midnightUtc(text);
   return !Number.isNaN(at) && new Date(at).toISOString().slice(0, 10) === text;
 }
 
-function readOffset(zone: string, at: Instant): number {
-  const parts: Partial<Record<Intl.DateTimeFormatPartTypes, number>> = {};
-  for (const part of formatFor(zone).formatToParts(at)) parts[part.type] = Number(part.value);
-  const { year = 0, month = 1, day = 1, hour = 0, minute = 0, second = 0 } = parts;
-  const local = Date.UTC(year, month - 1, day, hour, minute, second);
-  return (local - Math.floor(at / 1000) * 1000) / MINUTE_MS;
+/** The first instant at which a zone's clock shows a wall time (as if it were UTC); null when it is skipped. */
+function instantOf(zone: string, wall: number): Instant | null {
+  // Local time is within a day of UTC, so these two offsets stand before and after any change near this time.
+  const before = offsetMs(zone, wall - DAY_MS);
+  const after = offsetMs(zone, wall + DAY_MS);
+  const early = wall - Math.max(before, after);
+  if (early + offsetMs(zone, early) === wall) return early;
+  const late = wall - Math.min(before, after);
+  return late + offsetMs(zone, late) === wall ? late : null;
 }
 
-function formatFor(zone: string): Intl.DateTimeFormat {
-  let format = formats.get(zone);
-  if (!format) {
-    format = new Intl.DateTimeFormat('en-US', {
-      timeZone: zone,
-      hourCycle: 'h23',
-      year: 'numeric',
-      month: 'numeric',
-      day: 'numeric',
-      hour: 'numeric',
-      minute: 'numeric',
-      second: 'numeric',
-    });
-    formats.set(zone, format);
-  }
-  return format;
+function midnightUtc(date: LocalDate): number {
+  return Date.parse(`${date}T00:00:00Z`);
 }

@@ -3,6 +3,7 @@ import {
   Component,
   computed,
   inject,
+  Injector,
   input,
   type OnInit,
   output,
@@ -18,6 +19,7 @@ import { ServerClock } from '../graphql/server-clock';
 import { Session } from '../session/session';
 import { failureSentence } from '../ui/failure-sentence';
 import { FormDialog } from '../ui/form-dialog';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { has, ProblemList, type FormProblem } from '../ui/problem-list';
 import { localDate } from '../ui/when';
 import { boardCount } from './order-words';
@@ -30,7 +32,7 @@ const MOST_BOARDS = 200;
   imports: [FormDialog, ProblemList, ReactiveFormsModule],
   template: `
     <app-form-dialog heading="Make a batch" [dirty]="dirty" (closed)="closed.emit()">
-      <form novalidate [formGroup]="form" (ngSubmit)="make()">
+      <form novalidate [formGroup]="form" (ngSubmit)="submit($event)">
         <p class="ct-quiet">
           {{ line().designName }}, of which the order wants {{ boardCount(line().count) }}. More may
           be made: what is over goes into stock.
@@ -84,6 +86,7 @@ const MOST_BOARDS = 200;
 })
 export class LineBatch implements OnInit {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
   private readonly clock = inject(ServerClock);
   private readonly session = inject(Session);
   private readonly dialog = viewChild.required(FormDialog);
@@ -115,7 +118,13 @@ export class LineBatch implements OnInit {
     this.form.reset({ boards, dueDate: this.dueDate() });
   }
 
-  protected async make(): Promise<void> {
+  protected async submit(event: Event): Promise<void> {
+    const form = event.target as HTMLFormElement;
+    await this.make();
+    if (this.problems().length > 0) focusFirstProblem(form, this.injector);
+  }
+
+  private async make(): Promise<void> {
     if (this.busy()) return;
     const { boards, dueDate } = this.form.getRawValue();
     if (boards === null || !Number.isInteger(boards) || boards < 1 || boards > MOST_BOARDS) {

@@ -3,6 +3,7 @@ import {
   Component,
   computed,
   inject,
+  Injector,
   output,
   signal,
   viewChild,
@@ -22,6 +23,7 @@ import { Session } from '../session/session';
 import { failureSentence } from '../ui/failure-sentence';
 import { FormDialog } from '../ui/form-dialog';
 import { Icon } from '../ui/icon';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { has, ProblemList, type FormProblem } from '../ui/problem-list';
 import { Swatch } from '../ui/swatch';
 import { localDate } from '../ui/when';
@@ -40,6 +42,7 @@ type LineForm = FormGroup<{ designId: FormControl<string>; count: FormControl<nu
 })
 export class NewOrder {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
   private readonly builder = inject(NonNullableFormBuilder);
   private readonly clock = inject(ServerClock);
   private readonly session = inject(Session);
@@ -88,7 +91,13 @@ export class NewOrder {
     this.problems.set([]);
   }
 
-  protected async enter(): Promise<void> {
+  protected async submit(event: Event): Promise<void> {
+    const form = event.target as HTMLFormElement;
+    await this.enter();
+    if (this.problems().length > 0) focusFirstProblem(form, this.injector);
+  }
+
+  private async enter(): Promise<void> {
     if (this.busy()) return;
     const { input, problems } = readOrder(this.form.getRawValue(), this.today());
     this.problems.set(problems);

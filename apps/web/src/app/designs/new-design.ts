@@ -1,9 +1,11 @@
 import {
+  afterNextRender,
   ChangeDetectionStrategy,
   Component,
   computed,
   type ElementRef,
   inject,
+  Injector,
   input,
   output,
   signal,
@@ -25,6 +27,7 @@ import { CreateDesignDocument, type DesignFieldsFragment } from '../graphql/gene
 import { failureSentence } from '../ui/failure-sentence';
 import { FormDialog } from '../ui/form-dialog';
 import { Icon } from '../ui/icon';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { has, ProblemList, type FormProblem } from '../ui/problem-list';
 import { Swatch } from '../ui/swatch';
 import { drawableStrips, readDesign, widthHint } from './design-draft';
@@ -39,7 +42,7 @@ const LENGTHS = [
 const COUNTS = [
   { name: 'slices', label: 'Slices of a board', most: 60 },
   { name: 'panelCount', label: 'Panels', most: 6 },
-  { name: 'panelBoards', label: 'for so many boards', most: 24 },
+  { name: 'panelBoards', label: 'Boards from them', most: 24 },
   { name: 'blocksPerBoard', label: 'Blocks a board', most: 4 },
   { name: 'panelClampCount', label: 'Clamps a panel', most: 40 },
   { name: 'blockClampCount', label: 'Clamps a block', most: 40 },
@@ -55,6 +58,7 @@ const COUNTS = [
 })
 export class NewDesign {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
   private readonly builder = inject(NonNullableFormBuilder);
   private readonly dialog = viewChild.required(FormDialog);
   private readonly stripList = viewChild.required<ElementRef<HTMLElement>>('stripList');
@@ -139,12 +143,23 @@ export class NewDesign {
     this.strips.removeAt(index, { emitEvent: false });
     this.strips.insert(index + by, strip);
     this.changed();
-    const row = this.stripList().nativeElement.children[index + by];
     const same = `[data-move="${button.dataset['move'] ?? ''}"]`;
-    setTimeout(() => row?.querySelector<HTMLElement>(same)?.focus());
+    afterNextRender(
+      () => {
+        const row = this.stripList().nativeElement.children[index + by];
+        row?.querySelector<HTMLElement>(same)?.focus();
+      },
+      { injector: this.injector },
+    );
   }
 
-  protected async make(): Promise<void> {
+  protected async submit(event: Event): Promise<void> {
+    const form = event.target as HTMLFormElement;
+    await this.make();
+    if (this.problems().length > 0) focusFirstProblem(form, this.injector);
+  }
+
+  private async make(): Promise<void> {
     if (this.busy()) return;
     const { input: wanted, problems } = readDesign(this.form.getRawValue(), this.unit());
     this.problems.set(problems);

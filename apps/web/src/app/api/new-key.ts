@@ -2,6 +2,7 @@ import {
   ChangeDetectionStrategy,
   Component,
   inject,
+  Injector,
   output,
   signal,
   viewChild,
@@ -14,6 +15,7 @@ import { CopyText } from '../ui/copy-text';
 import { failureSentence } from '../ui/failure-sentence';
 import { FormDialog } from '../ui/form-dialog';
 import { Icon } from '../ui/icon';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { has, ProblemList, type FormProblem } from '../ui/problem-list';
 import { curlExample, scopeMeaning, scopeName, SCOPES } from './key-words';
 
@@ -36,6 +38,7 @@ const LIFETIMES = [
 })
 export class NewKey {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
   private readonly builder = inject(NonNullableFormBuilder);
   private readonly dialog = viewChild.required(FormDialog);
 
@@ -66,7 +69,13 @@ export class NewKey {
     this.dialog().close();
   }
 
-  protected async make(): Promise<void> {
+  protected async submit(event: Event): Promise<void> {
+    const form = event.target as HTMLFormElement;
+    await this.make();
+    if (this.problems().length > 0) focusFirstProblem(form, this.injector);
+  }
+
+  private async make(): Promise<void> {
     if (this.busy()) return;
     const { name, days, ...ticked } = this.form.getRawValue();
     const scopes = SCOPES.filter((scope) => ticked[scope]);

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, inject, Injector, signal } from '@angular/core';
 import { NonNullableFormBuilder, ReactiveFormsModule } from '@angular/forms';
 import { RouterLink } from '@angular/router';
 import { Apollo } from 'apollo-angular';
@@ -16,6 +16,7 @@ import { FailedPanel } from '../ui/failed-panel';
 import { failureKind, type FailureKind } from '../ui/failure-kind';
 import { failureSentence } from '../ui/failure-sentence';
 import { Icon } from '../ui/icon';
+import { focusFirstProblem } from '../ui/focus-problem';
 import { has, ProblemList, type FormProblem } from '../ui/problem-list';
 import { Skeleton } from '../ui/skeleton';
 import { StatePanel } from '../ui/state-panel';
@@ -35,6 +36,7 @@ const LONGEST_NAME = 60;
 })
 export class ScreensPage {
   private readonly apollo = inject(Apollo);
+  private readonly injector = inject(Injector);
   private readonly ask = inject(Ask);
   private readonly clock = inject(ServerClock);
   private readonly session = inject(Session);
@@ -67,7 +69,13 @@ export class ScreensPage {
     }
   }
 
-  protected async pair(): Promise<void> {
+  protected async submit(event: Event): Promise<void> {
+    const form = event.target as HTMLFormElement;
+    await this.pair();
+    if (this.problems().length > 0) focusFirstProblem(form, this.injector);
+  }
+
+  private async pair(): Promise<void> {
     const { code, name, problems } = readPairing(this.form.getRawValue());
     this.problems.set(problems);
     this.told.set(null);

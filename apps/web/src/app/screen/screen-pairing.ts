@@ -32,7 +32,8 @@ const TRY_AGAIN = 10_000;
     <p class="brand"><app-mark /> Clamptide</p>
     <h1>Pair this display</h1>
     @if (pairing(); as wanted) {
-      <p class="code" [attr.aria-label]="spelled()">
+      <p class="code">
+        <span class="ct-hidden">{{ spelled() }}</span>
         <span aria-hidden="true">{{ halves()[0] }}</span>
         <span aria-hidden="true">{{ halves()[1] }}</span>
       </p>

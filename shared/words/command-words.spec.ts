@@ -45,7 +45,8 @@ describe('piecesName', () => {
   it('names one, several, all and the whole batch', () => {
     expect(piecesName('BLOCK', [4])).toBe('block 4');
     expect(piecesName('BLOCK', [1, 4])).toBe('blocks 1 and 4');
-    expect(piecesName('PANEL', [1, 2], true)).toBe('all 2 panels');
+    expect(piecesName('PANEL', [1, 2], true)).toBe('both panels');
+    expect(piecesName('BLOCK', [1, 2, 4], true)).toBe('all 3 blocks');
     expect(piecesName('BATCH', [0])).toBe('');
   });
 });

@@ -30,6 +30,6 @@ export function piecesName(scope: StepScope, pieces: readonly number[], all = fa
   if (scope === 'BATCH' || first === undefined) return '';
   if (pieces.length === 1) return pieceName(scope, first);
   const kind = scope === 'PANEL' ? 'panels' : 'blocks';
-  if (all) return `all ${pieces.length} ${kind}`;
+  if (all) return pieces.length === 2 ? `both ${kind}` : `all ${pieces.length} ${kind}`;
   return `${kind} ${pieces.slice(0, -1).join(', ')} and ${pieces.at(-1)}`;
 }

@@ -84,7 +84,7 @@ export class BatchCard {
   protected readonly limit = computed<Limit | null>(() => {
     const [hold] = this.card().card.limits;
     if (!hold) return null;
-    const limit = limitOf(this.floor(), hold, this.board.zone(), this.clock.now());
+    const limit = limitOf(this.floor(), hold, this.board.zone(), this.clock.minute());
     const isOnButton = this.next()?.latestAt === hold.latestAt;
     return limit && (limit.isUrgent || !isOnButton) ? limit : null;
   });
@@ -95,7 +95,7 @@ export class BatchCard {
     if (next?.kind !== 'START' || this.card().card.shelf !== 'READY') return null;
     const { batch } = this.card();
     const verdict = judge(
-      this.judging.view(batch),
+      this.judging.view(batch, this.clock.minute()),
       batch.floor,
       { kind: 'START', step: next.step.key, pieces: [piece], happenedAt: null, override: null },
       this.judging.actor(),

@@ -120,7 +120,7 @@ export class BatchPage {
   protected readonly offers = computed(() => {
     const [batch, card] = [this.batch(), this.card()];
     if (!batch || !card || this.judging.whyNot() !== null) return [];
-    const view = this.judging.view(batch);
+    const view = this.judging.view(batch, this.clock.minute());
     return overridesOf(view, batch.floor, card.card.holds, this.judging.actor());
   });
   protected readonly undo = computed(() => {

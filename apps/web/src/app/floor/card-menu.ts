@@ -68,14 +68,17 @@ export class CardMenu {
       const all = item(group.pieces);
       return [...single, { ...all, words: `${all.words}, all ${group.pieces.length}` }];
     });
-    const overrides = overridesOf(this.judging.view(batch), batch.floor, card.holds, actor).map(
-      ({ words, command }) => ({
-        icon: 'warning' as const,
-        words,
-        isDangerous: true,
-        run: () => void this.commands.override(id, command),
-      }),
-    );
+    const overrides = overridesOf(
+      this.judging.view(batch, this.clock.minute()),
+      batch.floor,
+      card.holds,
+      actor,
+    ).map(({ words, command }) => ({
+      icon: 'warning' as const,
+      words,
+      isDangerous: true,
+      run: () => void this.commands.override(id, command),
+    }));
     const { undo } = batch;
     const isMine = undo?.by === actor.memberId || may(actor.roles, 'undoOthers');
     const canUndo = undo && isMine && Date.parse(undo.until) > now;

@@ -33,12 +33,13 @@ export class FloorJudging {
 
   private readonly floors = computed(() => this.store.open().map((batch) => batch.floor));
 
-  view(batch: BoardBatch): FloorView {
+  /** What the rules look at; `now` is the exact moment unless a caller that only shows something is content with less. */
+  view(batch: BoardBatch, now = this.clock.now()): FloorView {
     const around = this.store.around();
     return {
       shop: around?.shop ?? { zone: 'UTC', stations: [], clamps: [] },
       batches: this.floors(),
-      now: momentOf(batch, this.clock.now()),
+      now: momentOf(batch, now),
     };
   }
 

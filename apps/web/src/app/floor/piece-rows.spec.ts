@@ -42,6 +42,18 @@ describe('pieceRows', () => {
     expect(states(batch, 'BATCH', 0)).toMatchObject({ mill: 'DONE', 'flatten-2': 'TODO' });
   });
 
+  it('tells a maximum that still counts from one that was kept or missed', () => {
+    const state = (ago: number) =>
+      pieceRows(floor(...ripped(ago), run('glue-1', 1, -3)), 'PANEL', now).map(
+        (row) => row.cells[0]?.state,
+      );
+    expect(state(60)).toMatchObject([
+      { kind: 'CLEAR' },
+      { kind: 'LIMIT', latestAt: now + 23 * 3_600_000, isMissed: false },
+    ]);
+    expect(state(25 * 60)[1]).toMatchObject({ kind: 'LIMIT', isMissed: true });
+  });
+
   it('shows what could start now and what was cut short', () => {
     const cut = { ...run('clamped-1', 1, null), cutAt: NOW, cutBy: 'm1' };
     const batch = floor(...ripped(300), run('glue-1', 1, -50, -30), cut);

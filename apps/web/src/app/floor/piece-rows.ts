@@ -1,7 +1,7 @@
 import type { FloorBatch, StepRun } from '#shared/floor/model';
 import { piecesOf } from '#shared/floor/pieces';
-import { isDone, runOf, startableSteps, waitOn } from '#shared/floor/progress';
-import type { RouteStep, StepScope } from '#shared/route/route';
+import { isDone, limitsOf, runOf, startableSteps, waitOn } from '#shared/floor/progress';
+import type { RouteStep, StepScope, WaitStep } from '#shared/route/route';
 import type { Instant } from '#shared/time/instant';
 
 /** How one step stands on one piece. */
@@ -12,8 +12,10 @@ export type StepState =
   | { readonly kind: 'WORKING'; readonly since: Instant; readonly by: string | null }
   | { readonly kind: 'DONE'; readonly at: Instant; readonly by: string | null }
   | { readonly kind: 'HOLDING'; readonly since: Instant; readonly clearAt: Instant }
+  /** A wait that is over and wants nothing any more. */
+  | { readonly kind: 'CLEAR'; readonly at: Instant }
   /** A wait that holds nothing any more, but wants the next step by then. */
-  | { readonly kind: 'CLEAR'; readonly at: Instant; readonly latestAt: Instant | null }
+  | { readonly kind: 'LIMIT'; readonly latestAt: Instant; readonly isMissed: boolean }
   | { readonly kind: 'CUT'; readonly at: Instant; readonly by: string | null };
 
 export interface StepCell {
@@ -36,33 +38,40 @@ export function pieceRows(batch: FloorBatch, scope: StepScope, at: Instant): Pie
   const startable = new Set(
     startableSteps(batch, at).map(({ step, piece }) => `${step.key}/${piece}`),
   );
+  const limits = new Map(
+    limitsOf(batch).map((limit) => [`${limit.step}/${limit.piece}`, limit.latestAt]),
+  );
   return piecesOf(batch, scope).map((piece) => ({
     scope,
     piece,
     cells: steps.map((step) => ({
       step,
       piece,
-      state: stateOf(batch, step, piece, at, startable.has(`${step.key}/${piece}`)),
+      state:
+        step.kind === 'WORK'
+          ? workState(runOf(batch, step.key, piece), startable.has(`${step.key}/${piece}`))
+          : waitState(batch, step, piece, at, limits.get(`${step.key}/${piece}`) ?? null),
     })),
   }));
 }
 
-function stateOf(
+function waitState(
   batch: FloorBatch,
-  step: RouteStep,
+  step: WaitStep,
   piece: number,
   at: Instant,
-  canStart: boolean,
+  latestAt: Instant | null,
 ): StepState {
-  const run = runOf(batch, step.key, piece);
-  if (step.kind === 'WORK') return workState(run, canStart);
   const wait = waitOn(batch, step, piece);
   if (!wait) return { kind: 'TODO' };
-  if (wait.cut) return { kind: 'CUT', at: wait.clearAt, by: run?.cutBy ?? null };
-  if (isDone(batch, step, piece, at)) {
-    return { kind: 'CLEAR', at: wait.clearAt, latestAt: wait.latestAt };
+  if (wait.cut) {
+    return { kind: 'CUT', at: wait.clearAt, by: runOf(batch, step.key, piece)?.cutBy ?? null };
   }
-  return { kind: 'HOLDING', since: wait.since, clearAt: wait.clearAt };
+  if (!isDone(batch, step, piece, at)) {
+    return { kind: 'HOLDING', since: wait.since, clearAt: wait.clearAt };
+  }
+  if (latestAt !== null) return { kind: 'LIMIT', latestAt, isMissed: latestAt < at };
+  return { kind: 'CLEAR', at: wait.clearAt };
 }
 
 function workState(run: StepRun | null, canStart: boolean): StepState {

@@ -65,6 +65,7 @@ describe('stageLoad', () => {
 describe('loadWords', () => {
   it('says full where a number would have to be compared', () => {
     expect(loadWords({ name: 'glue bench', used: 2, capacity: 2 })).toBe('bench full');
+    expect(loadWords({ name: 'sanding bench', used: 0, capacity: 2 })).toBe('bench free');
     expect(loadWords({ name: 'clamps', used: 18, capacity: 18 })).toBe('clamps full');
   });
 });

@@ -102,5 +102,6 @@ function split(
 export function loadWords({ name, used, capacity }: ResourceLoad): string {
   const short = name.replace(/^(?:glue|table|sanding|finishing) (bench|saw)$/, '$1');
   if (capacity <= 1) return `${short} ${used < capacity ? 'free' : 'busy'}`;
+  if (used === 0) return `${short} free`;
   return used >= capacity ? `${short} full` : `${short} ${used} of ${capacity}`;
 }

@@ -45,6 +45,9 @@ import type { StepCell } from './piece-rows';
           ><span aria-hidden="true">–</span><span class="ct-hidden">to do</span></span
         >
       }
+      @case ('LIMIT') {
+        <span class="words hold"><app-icon name="clock" />{{ look().words }}</span>
+      }
       @case ('CUT') {
         <span class="words cut"><app-icon name="warning" />{{ look().words }}</span>
       }
@@ -64,6 +67,7 @@ import type { StepCell } from './piece-rows';
       font-weight: 600;
     }
     .done,
+    .hold,
     .cut {
       display: inline-flex;
       align-items: center;
@@ -131,9 +135,9 @@ export class StepState {
       case 'HOLDING':
         return look(`clear ${clock(state.clearAt)}`, burned(state, now));
       case 'CLEAR':
-        return look(
-          state.latestAt === null ? `clear ${clock(state.at)}` : `by ${clock(state.latestAt)}`,
-        );
+        return look(`clear ${clock(state.at)}`);
+      case 'LIMIT':
+        return look(`${state.isMissed ? 'too late since' : 'by'} ${clock(state.latestAt)}`);
       case 'CUT':
         return look(`overridden ${clock(state.at)}`);
     }

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { RouterLink } from '@angular/router';
 import { Apollo } from 'apollo-angular';
@@ -21,15 +21,27 @@ import { dayTime } from '../ui/when';
   template: `
     @if (unseen().length > 0) {
       <section aria-label="Overridden holds">
-        @for (each of unseen(); track each.override.id) {
+        @for (each of shown(); track each.override.id) {
           <div class="one">
             <app-icon name="warning" />
             <p>
               <a [routerLink]="['/batch', each.batchCode]">{{ each.batchCode }}</a>
-              {{ when(each.override.at) }}: {{ each.sentence }} Reason: “{{ each.override.reason }}”
+              {{ when(each.override.at) }}: {{ each.sentence }}
             </p>
-            <button type="button" class="ct-button" (click)="see(each.override.id)">Seen</button>
+            <button
+              type="button"
+              class="ct-button"
+              [attr.aria-label]="'Seen: ' + each.sentence"
+              (click)="see(each.override.id)"
+            >
+              Seen
+            </button>
           </div>
+        }
+        @if (unseen().length > shown().length) {
+          <button type="button" class="ct-button more" (click)="isOpen.set(true)">
+            {{ unseen().length - shown().length }} more
+          </button>
         }
       </section>
     }
@@ -48,6 +60,9 @@ import { dayTime } from '../ui/when';
       gap: 10px;
       padding: 6px 20px;
     }
+    .more {
+      margin: 0 20px 8px 48px;
+    }
     p {
       flex: 1;
       margin: 0;
@@ -65,6 +80,11 @@ export class OverrideBanner {
   private readonly clock = inject(ServerClock);
   private readonly session = inject(Session);
   protected readonly unseen = signal<UnseenOverridesQuery['unseenOverrides']>([]);
+  protected readonly isOpen = signal(false);
+  /** The newest, unless the person wants all: the page below must stay in view. */
+  protected readonly shown = computed(() =>
+    this.isOpen() ? this.unseen() : this.unseen().slice(-1),
+  );
 
   constructor() {
     void this.read();

@@ -33,10 +33,8 @@ export class FloorCarry {
   private readonly heldNow = signal<Held | null>(null);
   readonly held = this.heldNow.asReadonly();
 
-  private readonly batch = computed(() => {
-    const held = this.heldNow();
-    return held ? (this.store.all().get(held.batchId) ?? null) : null;
-  });
+  private readonly heldId = computed(() => this.heldNow()?.batchId ?? null);
+  private readonly batch = computed(() => this.store.all().get(this.heldId() ?? '') ?? null);
   /** Null while nothing is carried. */
   readonly verdicts = computed<ReadonlyMap<Place, PlaceVerdict> | null>(() => {
     const batch = this.batch();
@@ -53,6 +51,12 @@ export class FloorCarry {
   lift(card: BoardCard): void {
     const { place } = card.card;
     this.heldNow.set({ batchId: card.id, from: place, over: place, by: 'POINTER' });
+  }
+
+  /** A pointer is over a place, or over none. */
+  hover(over: Place | null): void {
+    const held = this.heldNow();
+    if (held && over !== null && over !== held.over) this.heldNow.set({ ...held, over });
   }
 
   accepts(place: Place): boolean {

@@ -1,4 +1,10 @@
-import { CdkDrag, CdkDragPlaceholder, CdkDropList, type CdkDragEnd } from '@angular/cdk/drag-drop';
+import {
+  CdkDrag,
+  CdkDragPlaceholder,
+  CdkDropList,
+  type CdkDragEnd,
+  type CdkDragMove,
+} from '@angular/cdk/drag-drop';
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import type { Place } from '#shared/route/route';
 import { placeWords } from '#shared/words/card-words';
@@ -60,7 +66,7 @@ export class FloorColumn {
   protected readonly said = computed(() => this.carry.verdicts()?.get(this.column().place) ?? null);
   protected readonly isOver = computed(() => {
     const held = this.carry.held();
-    return held?.by === 'KEYS' && held.over === this.column().place;
+    return held?.over === this.column().place && held.over !== held.from;
   });
   protected readonly noDrag = computed(() => this.board.narrow() || this.judging.whyNot() !== null);
 
@@ -71,12 +77,20 @@ export class FloorColumn {
     this.carry.lift(card);
   }
 
-  /** The hand has let go. A place that refuses is never entered, so the place is looked up where the pointer is. */
-  protected ended({ dropPoint }: CdkDragEnd): void {
-    const under = document
-      .elementsFromPoint(dropPoint.x, dropPoint.y)
-      .map((element) => element.closest('[data-place]')?.getAttribute('data-place'))
-      .find((place) => place);
-    this.carry.letGo(COLUMNS.find((place) => place === under) ?? null);
+  protected hover({ pointerPosition }: CdkDragMove): void {
+    this.carry.hover(placeUnder(pointerPosition));
   }
+
+  protected ended({ dropPoint }: CdkDragEnd): void {
+    this.carry.letGo(placeUnder(dropPoint));
+  }
+}
+
+/** The place under the pointer. A place that refuses is never entered, so the drag itself does not know of it. */
+function placeUnder({ x, y }: { readonly x: number; readonly y: number }): Place | null {
+  for (const element of document.elementsFromPoint(x, y)) {
+    const under = element.closest('[data-place]')?.getAttribute('data-place');
+    if (under) return COLUMNS.find((place) => place === under) ?? null;
+  }
+  return null;
 }

@@ -84,6 +84,15 @@ export class CardMenu {
     const canUndo = undo && isMine && Date.parse(undo.until) > now;
     return [
       ...steps,
+      ...(steps.length > 0
+        ? [
+            {
+              icon: 'clock' as const,
+              words: 'It happened earlier …',
+              run: () => this.panels.open({ kind: 'EARLIER', batchId: id }),
+            },
+          ]
+        : []),
       {
         icon: 'floor' as const,
         words: 'Move to …',
@@ -105,7 +114,7 @@ export class CardMenu {
           ]
         : []),
       {
-        icon: 'clock' as const,
+        icon: 'info' as const,
         words: 'Pieces and history',
         isReading: true,
         run: () => void this.router.navigate(['/batch', batch.floor.code]),

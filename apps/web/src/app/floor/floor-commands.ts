@@ -4,6 +4,7 @@ import { judge } from '#shared/floor/judge';
 import type { FloorCommand } from '#shared/floor/model';
 import type { Refusal } from '#shared/floor/refusal';
 import { stepAt, type Place } from '#shared/route/route';
+import type { Instant } from '#shared/time/instant';
 import { cautionLine, CAUTION_ENDING } from '#shared/words/caution-words';
 import { doneSentence } from '#shared/words/command-words';
 import type { CommandAnswerFragment } from '../graphql/generated/graphql';
@@ -33,12 +34,23 @@ export class FloorCommands {
   /** Batches with a command under way. */
   readonly busy = this.busyNow.asReadonly();
 
-  start(batchId: string, step: string, pieces: readonly number[]): Promise<boolean> {
-    return this.give(batchId, { kind: 'START', step, pieces, happenedAt: null, override: null });
+  /** Starts a step on pieces; `happenedAt` where it was begun before it is recorded. */
+  start(
+    batchId: string,
+    step: string,
+    pieces: readonly number[],
+    happenedAt: Instant | null = null,
+  ): Promise<boolean> {
+    return this.give(batchId, { kind: 'START', step, pieces, happenedAt, override: null });
   }
 
-  finish(batchId: string, step: string, pieces: readonly number[]): Promise<boolean> {
-    return this.give(batchId, { kind: 'FINISH', step, pieces, happenedAt: null, override: null });
+  finish(
+    batchId: string,
+    step: string,
+    pieces: readonly number[],
+    happenedAt: Instant | null = null,
+  ): Promise<boolean> {
+    return this.give(batchId, { kind: 'FINISH', step, pieces, happenedAt, override: null });
   }
 
   assign(batchId: string, memberId: string | null): Promise<boolean> {

@@ -1,6 +1,13 @@
 import { CdkDropListGroup } from '@angular/cdk/drag-drop';
 import { CdkScrollable } from '@angular/cdk/scrolling';
-import { ChangeDetectionStrategy, Component, computed, ElementRef, inject } from '@angular/core';
+import {
+  afterRenderEffect,
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  ElementRef,
+  inject,
+} from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { dateWords } from '#shared/time/words';
 import { placeWords } from '#shared/words/card-words';
@@ -15,6 +22,7 @@ import { clockTime } from '../ui/when';
 import { SHELVES } from './board-columns';
 import { cardTowards } from './carry';
 import { CautionPanel } from './caution-panel';
+import { EarlierPanel } from './earlier-panel';
 import { FilterBar } from './filter-bar';
 import { FloorBoard } from './floor-board';
 import { FloorCarry } from './floor-carry';
@@ -38,6 +46,7 @@ import { Notices } from './notices';
     CautionPanel,
     CdkDropListGroup,
     CdkScrollable,
+    EarlierPanel,
     FailedPanel,
     FilterBar,
     FloorColumn,
@@ -118,6 +127,21 @@ export class FloorPage {
   protected readonly placeWords = placeWords;
   protected readonly none = NO_FILTERS;
   protected readonly stages = Array.from({ length: 7 });
+
+  constructor() {
+    // The picked stage, and the column that a card is carried over by keys, are where one can see them.
+    afterRenderEffect({
+      write: () => {
+        const held = this.carry.held();
+        const shown =
+          held?.by === 'KEYS' ? `[data-place="${held.over}"]` : '.picker [aria-current="true"]';
+        if (held?.by === 'KEYS' || this.board.picked()) {
+          const near = { inline: 'nearest', block: 'nearest' } as const;
+          this.root.querySelector(shown)?.scrollIntoView(near);
+        }
+      },
+    });
+  }
 
   /** Arrow keys lead from card to card while none is carried. */
   protected walk(event: KeyboardEvent): void {

@@ -3,7 +3,7 @@ import type { CautionCode } from '#shared/route/route';
 
 /** A dialog of the Floor. */
 export type FloorPanel =
-  | { readonly kind: 'MOVE' | 'GIVE'; readonly batchId: string }
+  | { readonly kind: 'MOVE' | 'GIVE' | 'EARLIER'; readonly batchId: string }
   | { readonly kind: 'CAUTION'; readonly code: CautionCode }
   | { readonly kind: 'NEW_BATCH' };
 

@@ -40,6 +40,10 @@ import { StepState } from './step-state';
     </div>
   `,
   styles: `
+    /* What is hidden for sighted people stays inside, too, or a phone would grow as wide as the table. */
+    .ct-scroll {
+      position: relative;
+    }
     tbody th {
       position: sticky;
       z-index: 1;

@@ -1,4 +1,4 @@
-import { Injectable, computed, inject, signal } from '@angular/core';
+import { computed, inject, Injectable, InjectionToken, signal } from '@angular/core';
 import { Router } from '@angular/router';
 import { may, type Permission } from '#shared/members/permissions';
 import { Apollo } from 'apollo-angular';
@@ -11,6 +11,13 @@ import {
 } from '../graphql/generated/graphql';
 import { LostSession } from '../graphql/lost-session';
 import { ServerClock } from '../graphql/server-clock';
+import { RefusedError } from '../ui/failure-sentence';
+
+/** Opens an address of this app as a fresh page. */
+export const GO_TO = new InjectionToken<(address: string) => void>('GO_TO', {
+  providedIn: 'root',
+  factory: () => (address) => location.assign(address),
+});
 
 /** Who is signed in, which shop they look at, and what they may do there. */
 @Injectable({ providedIn: 'root' })
@@ -18,7 +25,9 @@ export class Session {
   private readonly apollo = inject(Apollo);
   private readonly router = inject(Router);
   private readonly clock = inject(ServerClock);
+  private readonly goTo = inject(GO_TO);
   private readonly known = signal<ViewerFieldsFragment | null | undefined>(undefined);
+  private leaving = false;
   private asking: Promise<ViewerFieldsFragment | null> | null = null;
 
   /** Null when nobody is signed in or nobody has asked yet. */
@@ -52,16 +61,33 @@ export class Session {
   }
 
   async signOut(): Promise<void> {
-    await firstValueFrom(this.apollo.mutate({ mutation: SignOutDocument }));
-    // A fresh page: no row of this shop stays in memory, no socket open.
-    location.assign('/sign-in');
+    await this.leave('/sign-in', async () => {
+      await firstValueFrom(this.apollo.mutate({ mutation: SignOutDocument }));
+    });
   }
 
   async switchShop(shopId: string): Promise<void> {
-    await firstValueFrom(
-      this.apollo.mutate({ mutation: SwitchShopDocument, variables: { shopId } }),
-    );
-    location.assign('/');
+    await this.leave('/', async () => {
+      const mutation = SwitchShopDocument;
+      const { data } = await firstValueFrom(
+        this.apollo.mutate({ mutation, variables: { shopId } }),
+      );
+      const refused = data?.switchShop.problems[0];
+      if (refused) throw new RefusedError(refused.sentence);
+    });
+  }
+
+  /** Goes to a fresh page, so that no row of this shop stays in memory and no socket open. */
+  private async leave(to: string, command: () => Promise<void>): Promise<void> {
+    // The socket may hear of it before the answer is here, and must not take it for a session that was ended.
+    this.leaving = true;
+    try {
+      await command();
+      this.goTo(to);
+    } catch (error) {
+      this.leaving = false;
+      throw error;
+    }
   }
 
   private async ask(): Promise<ViewerFieldsFragment | null> {
@@ -73,9 +99,9 @@ export class Session {
   }
 
   private lost(): void {
-    if (!this.viewer()) return;
+    if (this.leaving || !this.viewer()) return;
     this.known.set(null);
     const next = this.router.url;
-    location.assign(`/sign-in?${new URLSearchParams({ next, ended: '1' }).toString()}`);
+    this.goTo(`/sign-in?${new URLSearchParams({ next, ended: '1' }).toString()}`);
   }
 }

@@ -14,6 +14,7 @@ import { failureSentence } from '../ui/failure-sentence';
 import { ProblemList, type FormProblem } from '../ui/problem-list';
 import { Skeleton } from '../ui/skeleton';
 import { ago, dayTime } from '../ui/when';
+import { deviceName } from './device-name';
 import { Session } from './session';
 
 /** Where one is signed in, and how to end that elsewhere. */
@@ -49,6 +50,7 @@ export class SessionsPage {
   /** Null while they are read. */
   protected readonly sessions = signal<readonly SessionFieldsFragment[] | null>(null);
   protected readonly failed = signal(false);
+  protected readonly deviceName = deviceName;
   protected readonly busy = signal(false);
   protected readonly problems = signal<readonly FormProblem[]>([]);
   protected readonly hasOthers = computed(() => (this.sessions() ?? []).some((s) => !s.current));

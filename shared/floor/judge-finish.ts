@@ -58,11 +58,13 @@ export function giveBack(batch: FloorBatch, changes: FloorChangeSet, at: Instant
     const giver = stepAt(batch.route, releasingStep(taker, occupation))?.step;
     if (!giver) continue;
     const pieces = relatedPieces(batch, giver.scope, taker.scope, occupation.piece);
-    const done = pieces.every(
-      (piece) =>
-        finished.has(`${giver.key}/${piece}`) ||
-        (runOf(batch, giver.key, piece)?.finishedAt ?? null) !== null,
-    );
-    if (done) changes.released.push({ occupation, at: Math.max(at, occupation.since) });
+    // The last of the pieces gives it back, which need not be the one that is recorded last.
+    let last = occupation.since;
+    for (const piece of pieces) {
+      const isNow = finished.has(`${giver.key}/${piece}`);
+      const finishedAt = isNow ? at : (runOf(batch, giver.key, piece)?.finishedAt ?? Infinity);
+      last = Math.max(last, finishedAt);
+    }
+    if (last !== Infinity) changes.released.push({ occupation, at: last });
   }
 }

@@ -1,14 +1,14 @@
 import type { Instant } from '#shared/time/instant';
-import { rankOf, STAGES, stagesOf, type RouteStep } from '#shared/route/route';
+import { rankOf, STAGES, stagesOf, stepAt, type RouteStep } from '#shared/route/route';
 import { applyChanges } from './apply';
 import { happenedAt } from './happened';
 import type { FloorView } from './judge';
 import { giveBack } from './judge-finish';
-import { holdRunning } from './judge-start';
+import { holdRunning, stillHeld } from './judge-start';
 import type { Actor, FloorBatch, FloorCommand, RunChange } from './model';
 import { cautionBefore, cutRun, isReason } from './override';
 import { piecesOf } from './pieces';
-import { isDone, placeOf, runOf, waitOn } from './progress';
+import { holdsOf, isDone, placeOf, runOf, waitOn } from './progress';
 import { noChanges, refuse, type Refusal, type Verdict } from './refusal';
 
 type MoveCommand = Extract<FloorCommand, { kind: 'MOVE' }>;
@@ -33,24 +33,36 @@ export function judgeMove(
     return refuse({ code: 'NOT_ON_ROUTE', place: to });
   }
   if (from === to) return refuse({ code: 'ALREADY_THERE', place: to });
+  if (batch.releasedAt !== null && when.at < batch.releasedAt) {
+    return refuse({ code: 'BEFORE_THE_FACT_BEFORE', earliest: batch.releasedAt });
+  }
   return rankOf(to) > rankOf(from)
-    ? forward(batch, command, actor, when.at)
+    ? forward(view, batch, command, actor, when.at)
     : back(batch, command, when.at);
 }
 
-function forward(batch: FloorBatch, command: MoveCommand, actor: Actor, at: Instant): Verdict {
+function forward(
+  view: FloorView,
+  batch: FloorBatch,
+  command: MoveCommand,
+  actor: Actor,
+  at: Instant,
+): Verdict {
   const changes = noChanges();
   let moved = batch;
   for (const step of batch.route.steps) {
     if (rankOf(step.stage) >= rankOf(command.to)) break;
+    const passed: RunChange[] = [];
     for (const piece of piecesOf(batch, step.scope)) {
       if (isDone(moved, step, piece, at)) continue;
-      const change = pass(batch, moved, step, piece, command, actor, at);
+      const change = pass(view, batch, step, piece, command, actor, at);
       if ('code' in change) return refuse(change);
-      changes.runs.push(change);
+      passed.push(change);
       if (step.kind === 'WAIT') changes.cut.push({ step: step.key, piece, kind: step.hold });
-      moved = applyChanges(moved, { ...noChanges(), runs: [change] });
     }
+    if (passed.length === 0) continue;
+    changes.runs.push(...passed);
+    moved = applyChanges(moved, { ...noChanges(), runs: passed });
   }
   if (command.override && changes.cut.length === 0) return refuse({ code: 'NOTHING_TO_OVERRIDE' });
   giveBack(batch, changes, at);
@@ -61,8 +73,8 @@ function forward(batch: FloorBatch, command: MoveCommand, actor: Actor, at: Inst
 
 /** The change that gets a piece past a step on the way forward, or why it cannot pass. */
 function pass(
+  view: FloorView,
   batch: FloorBatch,
-  moved: FloorBatch,
   step: RouteStep,
   piece: number,
   command: MoveCommand,
@@ -104,23 +116,32 @@ function pass(
       source: step.source,
     };
   }
-  if (!command.override) {
-    const running = waitOn(moved, step, piece) ?? wait;
-    return holdRunning(step, piece, running.clearAt);
-  }
+  if (!command.override) return stillHeld(step, piece, wait.clearAt, view.now);
   return (
     cautionBefore(command.override, step.hold) ?? cutRun(batch, step, piece, at, actor.memberId)
   );
 }
 
+/**
+ * Putting the steps back does not end the waiting: wood with uncured glue or wet oil would be free for the machines of an
+ * earlier stage. So a running hold refuses the way back too; an override's reason is then the reason of the rework.
+ */
 function back(batch: FloorBatch, command: MoveCommand, at: Instant): Verdict {
-  if (!isReason(command.reason)) return refuse({ code: 'REASON_MISSING', what: 'REWORK' });
   const changes = noChanges();
-  const putBack = new Set(
-    batch.route.steps
-      .filter((step) => rankOf(step.stage) >= rankOf(command.to))
-      .map((step) => step.key),
-  );
+  const isPutBack = (step: RouteStep) => rankOf(step.stage) >= rankOf(command.to);
+  const putBack = new Set(batch.route.steps.filter(isPutBack).map((step) => step.key));
+  for (const hold of holdsOf(batch, at)) {
+    const step = stepAt(batch.route, hold.step)?.step;
+    if (step?.kind !== 'WAIT' || !isPutBack(step) || hold.since > at) continue;
+    if (!command.override) return refuse(holdRunning(step, hold.piece, hold.clearAt));
+    const refusal = cautionBefore(command.override, hold.kind);
+    if (refusal) return refuse(refusal);
+    changes.cut.push({ step: hold.step, piece: hold.piece, kind: hold.kind });
+  }
+  if (command.override && changes.cut.length === 0) return refuse({ code: 'NOTHING_TO_OVERRIDE' });
+  if (!isReason(command.reason ?? command.override?.reason ?? null)) {
+    return refuse({ code: 'REASON_MISSING', what: 'REWORK' });
+  }
   for (const run of batch.runs) {
     if (!putBack.has(run.step)) continue;
     const latest = Math.max(run.startedAt ?? 0, run.finishedAt ?? 0, run.cutAt ?? 0);

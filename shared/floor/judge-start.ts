@@ -34,6 +34,8 @@ export function judgeStart(
   const found = workStepOn(batch, command);
   if ('refusal' in found) return refuse(found.refusal);
   const { step, index, pieces } = found;
+  const earliest = factBefore(batch, step, pieces);
+  if (when.at < earliest) return refuse({ code: 'BEFORE_THE_FACT_BEFORE', earliest });
   const changes = noChanges();
   for (const piece of pieces) {
     const run = runOf(batch, step.key, piece);
@@ -62,6 +64,14 @@ export function judgeStart(
   if (batch.releasedAt === null) changes.fields.releasedAt = { before: null, after: when.at };
   const full = takeResources(view, batch, step, pieces, when.at, changes);
   return full ? refuse(full) : { ok: true, changes };
+}
+
+/** What a start cannot be earlier than: the batch's release, and the end of the same work done before a rework. */
+function factBefore(batch: FloorBatch, step: WorkStep, pieces: readonly number[]): Instant {
+  const ended = batch.occupations
+    .filter((o) => o.step === step.key && pieces.includes(o.piece) && o.until !== o.since)
+    .map((o) => o.until ?? -Infinity);
+  return Math.max(batch.releasedAt ?? -Infinity, ...ended);
 }
 
 /** The work step and pieces that a command names, or what is wrong with them. */
@@ -132,11 +142,7 @@ function readyFor(
           pieceKind: undone?.step.scope ?? before.scope,
         };
       }
-      if (!command.override) {
-        if (wait.clearAt <= view.now)
-          return { code: 'BEFORE_THE_FACT_BEFORE', earliest: wait.clearAt };
-        return holdRunning(before, related, wait.clearAt);
-      }
+      if (!command.override) return stillHeld(before, related, wait.clearAt, view.now);
       const refusal = cautionBefore(command.override, before.hold);
       if (refusal) return refusal;
       changes.cut.push({ step: before.key, piece: related, kind: before.hold });
@@ -144,6 +150,13 @@ function readyFor(
     }
   }
   return null;
+}
+
+/** The refusal of a hold that runs at the moment a fact is said to be of; one that has cleared since is a matter of time. */
+export function stillHeld(wait: WaitStep, piece: number, clearAt: Instant, now: Instant): Refusal {
+  return clearAt <= now
+    ? { code: 'BEFORE_THE_FACT_BEFORE', earliest: clearAt }
+    : holdRunning(wait, piece, clearAt);
 }
 
 /** The refusal that a running hold gives. */
@@ -191,25 +204,23 @@ function takeStation(
   const station = view.shop.stations.find((candidate) => candidate.key === key);
   // A station that the shop has given up since the route was copied limits nothing any more.
   if (!station) return null;
-  const held = heldFrom(view.batches, key, false, at);
-  const hereAlready = station.unit === 'BATCH' && held.some((h) => h.batch.id === batch.id);
   const perPiece = stationUnits(station, batch, step.scope);
-  const need = station.unit === 'BATCH' ? (hereAlready ? 0 : 1) : perPiece * pieces.length;
-  const free = Math.max(0, station.capacity - stationPeak(station, view.batches, at));
-  if (need > free) {
-    return {
-      code: 'STATION_FULL',
-      station: station.name,
-      capacity: station.capacity,
-      need,
-      free,
-      holder: firstToFree(held, view.now),
-    };
+  const taken = pieces.map((piece) => occupationOf(step, piece, key, false, perPiece, at));
+  // Judged with what would be taken in place, since a batch that has the station at one time may not at another.
+  const after = { ...batch, occupations: [...batch.occupations, ...taken] };
+  const batches = view.batches.map((other) => (other.id === batch.id ? after : other));
+  if (stationPeak(station, batches, at) <= station.capacity) {
+    changes.taken.push(...taken);
+    return null;
   }
-  for (const piece of pieces) {
-    changes.taken.push(occupationOf(step, piece, key, false, perPiece, at));
-  }
-  return null;
+  return {
+    code: 'STATION_FULL',
+    station: station.name,
+    capacity: station.capacity,
+    need: station.unit === 'BATCH' ? 1 : perPiece * pieces.length,
+    free: Math.max(0, station.capacity - stationPeak(station, view.batches, at)),
+    holder: firstToFree(heldFrom(view.batches, key, false, at), view.now),
+  };
 }
 
 function takeClamps(

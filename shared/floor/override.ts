@@ -12,6 +12,7 @@ export const REASON_MAX = 500;
 export function cautionOf(kind: HoldKind): CautionCode {
   switch (kind) {
     case 'ACCLIMATION':
+      return 'PLANER';
     case 'CLAMPED':
     case 'CURE':
     case 'FRESHNESS':

@@ -1,89 +1,57 @@
-import { MINUTE_MS, type Instant } from '#shared/time/instant';
-import type { FloorBatch, Hold, StepRun } from './model';
-import { piecesOf, relatedPieces } from './pieces';
+import type { Instant } from '#shared/time/instant';
 import type { Place, RouteStep, StepScope, WaitStep, WorkStep } from '#shared/route/route';
+import { indexOf, positionOf, type BegunWait } from './batch-index';
+import type { FloorBatch, Hold, StepRun } from './model';
+import { relatedPieces } from './pieces';
 
-const runIndex = new WeakMap<FloorBatch, Map<string, StepRun>>();
+export type { BegunWait } from './batch-index';
 
 /** The run of a step on a piece, or null when nobody has touched it. */
 export function runOf(batch: FloorBatch, step: string, piece: number): StepRun | null {
-  let index = runIndex.get(batch);
-  if (!index) {
-    index = new Map(batch.runs.map((run) => [`${run.step}/${run.piece}`, run]));
-    runIndex.set(batch, index);
-  }
-  return index.get(`${step}/${piece}`) ?? null;
+  return indexOf(batch).runs.get(step)?.[piece] ?? null;
 }
 
-/** A wait on one piece once it has begun: since when, until when, and when the next step comes too late. */
-export interface BegunWait {
-  since: Instant;
-  /** When it clears: its minimum, or the moment an override cut it. */
-  clearAt: Instant;
-  latestAt: Instant | null;
-  cut: boolean;
-}
-
-/**
- * The wait on a piece, or null when it has not begun. Its minimum counts from the last of the pieces it waits for, its
- * maximum from the first: the first face planed is the first to go stale.
- */
+/** The wait on a piece, or null when it has not begun. */
 export function waitOn(batch: FloorBatch, wait: WaitStep, piece: number): BegunWait | null {
-  const from = batch.route.steps.find((step) => step.key === wait.after);
-  if (!from) return null;
-  let first = Infinity;
-  let last = -Infinity;
-  for (const related of relatedPieces(batch, from.scope, wait.scope, piece)) {
-    const finishedAt = runOf(batch, from.key, related)?.finishedAt ?? null;
-    if (finishedAt === null) return null;
-    first = Math.min(first, finishedAt);
-    last = Math.max(last, finishedAt);
-  }
-  const cutAt = runOf(batch, wait.key, piece)?.cutAt ?? null;
-  const minimum = last + wait.minMinutes * MINUTE_MS;
-  return {
-    since: last,
-    clearAt: cutAt === null ? minimum : Math.min(cutAt, minimum),
-    latestAt: wait.maxMinutes === null ? null : first + wait.maxMinutes * MINUTE_MS,
-    cut: cutAt !== null,
-  };
+  return indexOf(batch).waits[positionOf(batch.route, wait.key)]?.[piece] ?? null;
 }
 
 /** Whether a step is done on a piece at an instant: finished work, or a wait that has cleared. */
 export function isDone(batch: FloorBatch, step: RouteStep, piece: number, at: Instant): boolean {
-  if (step.kind === 'WORK') {
-    const finishedAt = runOf(batch, step.key, piece)?.finishedAt ?? null;
-    return finishedAt !== null && finishedAt <= at;
-  }
-  const wait = waitOn(batch, step, piece);
-  return wait !== null && wait.clearAt <= at;
+  const doneAt = indexOf(batch).doneAt[positionOf(batch.route, step.key)]?.[piece];
+  return doneAt !== undefined && doneAt <= at;
 }
 
-/**
- * How far each piece has come: by scope and piece, the index of its first step of that scope that is not done. Kept for
- * the last instant asked, since a card asks many times for one.
- */
-function frontierOf(batch: FloorBatch, at: Instant): Map<string, number> {
+/** By scope and piece number, the place in the route of a piece's first step of that scope that is not done. */
+type Frontier = Record<StepScope, (number | undefined)[]>;
+
+const frontiers = new WeakMap<FloorBatch, { at: Instant; first: Frontier }>();
+
+/** How far each piece has come. Kept for the last instant asked, since a card asks many times for one. */
+function frontierOf(batch: FloorBatch, at: Instant): Frontier {
   const kept = frontiers.get(batch);
   if (kept?.at === at) return kept.first;
-  const first = new Map<string, number>();
+  const first: Frontier = { BATCH: [], PANEL: [], BLOCK: [] };
+  const { doneAt } = indexOf(batch);
   batch.route.steps.forEach((step, index) => {
-    for (const piece of piecesOf(batch, step.scope)) {
-      const key = `${step.scope}/${piece}`;
-      if (!first.has(key) && !isDone(batch, step, piece, at)) first.set(key, index);
-    }
+    const reached = first[step.scope];
+    doneAt[index]?.forEach((done, piece) => {
+      if (done > at) reached[piece] ??= index;
+    });
   });
   frontiers.set(batch, { at, first });
   return first;
 }
 
-const frontiers = new WeakMap<FloorBatch, { at: Instant; first: Map<string, number> }>();
-
 /** Where the batch stands at an instant: the stage of its least advanced piece. */
 export function placeOf(batch: FloorBatch, at: Instant): Place {
   if (batch.shippedAt !== null) return 'SHIPPED';
   if (batch.releasedAt === null) return 'QUEUED';
-  const least = Math.min(...frontierOf(batch, at).values());
+  const frontier = frontierOf(batch, at);
+  let least = Infinity;
+  for (const scope of SCOPES) {
+    for (const index of frontier[scope]) least = Math.min(least, index ?? Infinity);
+  }
   return batch.route.steps[least]?.stage ?? 'READY';
 }
 
@@ -116,23 +84,25 @@ export function startableSteps(
   at: Instant,
 ): { step: WorkStep; piece: number; index: number }[] {
   const startable: { step: WorkStep; piece: number; index: number }[] = [];
-  batch.route.steps.forEach((step, index) => {
-    if (step.kind !== 'WORK') return;
-    for (const piece of piecesOf(batch, step.scope)) {
-      if ((runOf(batch, step.key, piece)?.startedAt ?? null) !== null) continue;
+  const frontier = frontierOf(batch, at);
+  for (const scope of SCOPES) {
+    // Only the first thing left to do on a piece can be started on it.
+    frontier[scope].forEach((index, piece) => {
+      const step = index === undefined ? undefined : batch.route.steps[index];
+      if (index === undefined || step?.kind !== 'WORK') return;
+      if ((runOf(batch, step.key, piece)?.startedAt ?? null) !== null) return;
       if (!firstUndoneBefore(batch, index, piece, at)) startable.push({ step, piece, index });
-    }
-  });
-  return startable;
+    });
+  }
+  return startable.sort((a, b) => a.index - b.index || a.piece - b.piece);
 }
 
 /** Work that has started and not finished. */
 export function workingSteps(batch: FloorBatch): { step: WorkStep; piece: number; run: StepRun }[] {
   return batch.runs.flatMap((run) => {
-    const step = batch.route.steps.find((candidate) => candidate.key === run.step);
-    return step?.kind === 'WORK' && run.startedAt !== null && run.finishedAt === null
-      ? [{ step, piece: run.piece, run }]
-      : [];
+    if (run.startedAt === null || run.finishedAt !== null) return [];
+    const step = batch.route.steps[positionOf(batch.route, run.step)];
+    return step?.kind === 'WORK' ? [{ step, piece: run.piece, run }] : [];
   });
 }
 
@@ -149,10 +119,9 @@ export function firstUndoneBefore(
   let least = index;
   let on = 0;
   for (const scope of SCOPES) {
-    const from = batch.route.steps.findIndex((step) => step.scope === scope);
-    if (from < 0 || from >= index) continue;
+    if (!frontier[scope].some((undone) => undone !== undefined && undone < index)) continue;
     for (const related of relatedPieces(batch, scope, target.scope, piece)) {
-      const undone = frontier.get(`${scope}/${related}`) ?? Infinity;
+      const undone = frontier[scope][related] ?? Infinity;
       if (undone >= least) continue;
       least = undone;
       on = related;
@@ -169,19 +138,26 @@ export function standardMinutes(batch: FloorBatch, step: WorkStep): number {
   return step.setupMinutes + step.pieceMinutes * (step.scope === 'BATCH' ? batch.boards : 1);
 }
 
-function begunWaits(
-  batch: FloorBatch,
-): { step: WaitStep; piece: number; wait: BegunWait; index: number }[] {
-  return batch.route.steps.flatMap((step, index) => {
-    if (step.kind !== 'WAIT') return [];
-    return piecesOf(batch, step.scope).flatMap((piece) => {
-      const wait = waitOn(batch, step, piece);
-      return wait ? [{ step, piece, wait, index }] : [];
-    });
-  });
+interface Begun {
+  step: WaitStep;
+  piece: number;
+  wait: BegunWait;
+  index: number;
 }
 
-function toHold({ step, piece, wait }: { step: WaitStep; piece: number; wait: BegunWait }): Hold {
+function begunWaits(batch: FloorBatch): Begun[] {
+  const { waits } = indexOf(batch);
+  const begun: Begun[] = [];
+  batch.route.steps.forEach((step, index) => {
+    if (step.kind !== 'WAIT') return;
+    waits[index]?.forEach((wait, piece) => {
+      if (wait) begun.push({ step, piece, wait, index });
+    });
+  });
+  return begun;
+}
+
+function toHold({ step, piece, wait }: Begun): Hold {
   return {
     step: step.key,
     piece,

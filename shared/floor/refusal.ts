@@ -55,9 +55,10 @@ export type RefusalCode = Refusal['code'];
 
 export type PieceKind = 'BATCH' | 'PANEL' | 'BLOCK';
 
-/** Who keeps what is full, and when the first of them is expected to give it back. */
+/** Who keeps what is full, and when the first of them is expected to give it back, if people come to it as soon as they may. */
 export interface Holder {
   batchCode: string;
+  /** Not after now when it is given back already and was full only then. */
   freeAt: Instant | null;
 }
 

@@ -1,6 +1,6 @@
 import { MINUTE_MS, type Instant } from '#shared/time/instant';
 import type { ClampClass, ClampNeed, FloorBatch, FloorShop, Occupation, Station } from './model';
-import { piecesOf } from './pieces';
+import { piecesOf, relatedPieces } from './pieces';
 import { isDone, standardMinutes, waitOn } from './progress';
 import type { Holder } from './refusal';
 import { stepAt, type StepScope, type WorkStep } from '#shared/route/route';
@@ -86,16 +86,14 @@ export function clampsThatDo(shop: FloorShop, need: ClampNeed): ClampClass[] {
     .sort((a, b) => (a.length < b.length ? -1 : a.length > b.length ? 1 : 0));
 }
 
-/** Who of those that hold something is expected to give it back first. */
+/** Who of those that hold something gives it back first: when it is expected, or (for a time gone by) when it was. */
 export function firstToFree(held: readonly Held[], now: Instant): Holder | null {
-  const open = held
-    .filter(({ occupation }) => occupation.until === null)
-    .map(({ batch, occupation }) => ({
-      batchCode: batch.code,
-      freeAt: expectedFreeAt(batch, occupation, now),
-    }));
-  open.sort((a, b) => (a.freeAt ?? Infinity) - (b.freeAt ?? Infinity));
-  return open[0] ?? null;
+  const holders = held.map(({ batch, occupation }) => ({
+    batchCode: batch.code,
+    freeAt: occupation.until ?? expectedFreeAt(batch, occupation, now),
+  }));
+  holders.sort((a, b) => (a.freeAt ?? Infinity) - (b.freeAt ?? Infinity));
+  return holders[0] ?? null;
 }
 
 /**
@@ -115,9 +113,13 @@ export function expectedFreeAt(
   let at = Math.max(now, occupation.since + standardMinutes(batch, taker.step) * MINUTE_MS);
   if (until === taker.step.key) return at;
   for (const step of batch.route.steps.slice(taker.index, giver.index)) {
-    if (step.kind !== 'WAIT' || isDone(batch, step, occupation.piece, now)) continue;
-    const wait = waitOn(batch, step, occupation.piece);
-    at = Math.max(at, wait ? wait.clearAt : at + step.minMinutes * MINUTE_MS);
+    if (step.kind !== 'WAIT') continue;
+    const began = at;
+    for (const piece of relatedPieces(batch, step.scope, taker.step.scope, occupation.piece)) {
+      if (isDone(batch, step, piece, now)) continue;
+      const wait = waitOn(batch, step, piece);
+      at = Math.max(at, wait ? wait.clearAt : began + step.minMinutes * MINUTE_MS);
+    }
   }
   return at + standardMinutes(batch, giver.step) * MINUTE_MS;
 }

@@ -33,8 +33,17 @@ describe('dropVerdict', () => {
   });
 
   it('takes a move back as rework, and the own column as no move', () => {
-    expect(dropVerdict(view, curing, 'BLANK', helper)).toEqual({ kind: 'ACCEPT', isRework: true });
+    const later = { ...view, now: view.now + 12 * 3_600_000 };
+    expect(dropVerdict(later, curing, 'BLANK', helper)).toEqual({ kind: 'ACCEPT', isRework: true });
     expect(dropVerdict(view, curing, 'FIRST_GLUE_UP', helper)).toEqual({ kind: 'HERE' });
+  });
+
+  it('refuses a move back too while the glue cures', () => {
+    expect(dropVerdict(view, curing, 'BLANK', helper)).toMatchObject({
+      kind: 'REFUSE',
+      refusal: { code: 'HOLD_RUNNING' },
+    });
+    expect(overrideCautions(view, curing, moveTo('BLANK'), maker)).toEqual(['UNCURED_GLUE']);
   });
 
   it('refuses whoever moves no batches', () => {

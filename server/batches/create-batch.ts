@@ -6,6 +6,7 @@ import { design } from '#drizzle/tables/design';
 import { lineBatch, orderLine, shopOrder } from '#drizzle/tables/order';
 import { profile, shop, shopCounter } from '#drizzle/tables/shop';
 import { batchSchema } from '#shared/batches/batch-schema';
+import { shipByOf } from '#shared/orders/ship-by';
 import { resolveRoute, type FinishProfile, type GlueProfile } from '#shared/route/template';
 import type { RouteStep } from '#shared/route/route';
 import { toLocal } from '#shared/time/zone';
@@ -118,7 +119,8 @@ async function makeBatch(
     boards: wanted.boards,
     dueDate: wanted.dueDate ?? dues[0] ?? null,
     // A batch aims at the earliest ship-by of the lines it makes, unless it has none.
-    shipBy: shipBys[0] ?? wanted.dueDate,
+    shipBy:
+      shipBys[0] ?? (wanted.dueDate === null ? null : shipByOf(settings, wanted.dueDate, settings)),
     createdAt: now,
   });
   await tx.insert(board).values(

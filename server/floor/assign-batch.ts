@@ -31,7 +31,7 @@ export async function assignBatch(
     version,
     happenedAt: null,
     type: () => 'BATCH_ASSIGNED',
-    reason: null,
+    reasons: { override: null, rework: null },
     judge: (view, { floor }) =>
       judge(view, floor, { kind: 'ASSIGN', memberId: assignee }, { memberId, roles }),
   });

@@ -30,8 +30,8 @@ export interface FloorCommandRequest {
   type: (changes: FloorChangeSet) => FloorEventType;
   /** When it is said to have happened; null for now. */
   happenedAt: number | null;
-  /** A reason that goes with it, kept out of the event. */
-  reason: { kind: 'OVERRIDE' | 'REWORK'; text: string } | null;
+  /** Reasons that go with it, kept out of the event. Read once the rules have let it pass. */
+  reasons: { override: string | null; rework: string | null };
   judge(view: FloorView, loaded: LoadedBatch, tx: ShopTransaction): Verdict | Promise<Verdict>;
   /** More for the event: ids and versions only. */
   data?: object;
@@ -80,10 +80,9 @@ export async function runFloorCommand(
     }
     const { changes } = verdict;
     const happenedAt = new Date(Math.min(request.happenedAt ?? now.getTime(), now.getTime()));
+    const why = request.reasons.override;
     const override =
-      request.reason?.kind === 'OVERRIDE'
-        ? { by: principal.memberId, at: happenedAt, reason: request.reason.text.trim() }
-        : null;
+      why === null ? null : { by: principal.memberId, at: happenedAt, reason: why.trim() };
     const overrideIds = await storeChanges(tx, principal.shopId, target.floor, changes, override);
     const seq = await appendEvent(tx, principal.shopId, {
       type: request.type(changes),
@@ -119,9 +118,10 @@ async function keepReworkReason(
   batchId: string,
   request: FloorCommandRequest,
 ): Promise<{ reasonId?: string }> {
-  if (request.reason?.kind !== 'REWORK') return {};
+  const { rework } = request.reasons;
+  if (rework === null) return {};
   const id = newId();
-  await tx.insert(reworkReason).values({ shopId, id, batchId, reason: request.reason.text.trim() });
+  await tx.insert(reworkReason).values({ shopId, id, batchId, reason: rework.trim() });
   return { reasonId: id };
 }
 

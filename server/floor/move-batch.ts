@@ -23,9 +23,9 @@ export function moveBatch(context: Context, input: MoveBatchInput): Promise<Batc
     version: input.version,
     happenedAt,
     type: () => (isRework ? 'BATCH_REWORKED' : 'BATCH_MOVED'),
-    get reason() {
-      if (input.override) return { kind: 'OVERRIDE' as const, text: input.override.reason };
-      return isRework ? { kind: 'REWORK' as const, text: input.reason ?? '' } : null;
+    get reasons() {
+      const override = input.override?.reason ?? null;
+      return { override, rework: isRework ? (input.reason ?? override) : null };
     },
     judge: (view, { floor }) => {
       isRework = rankOf(input.to) < rankOf(placeOf(floor, happenedAt ?? view.now));

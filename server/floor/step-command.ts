@@ -24,7 +24,7 @@ export function stepCommand(
     version: input.version,
     happenedAt,
     type: () => (kind === 'START' ? 'STEP_STARTED' : 'STEP_FINISHED'),
-    reason: input.override ? { kind: 'OVERRIDE', text: input.override.reason } : null,
+    reasons: { override: input.override?.reason ?? null, rework: null },
     judge: (view, { floor }) => judge(view, floor, command, { memberId, roles }),
   });
 }

@@ -20,7 +20,7 @@ export function undoCommand(
     version: null,
     happenedAt: null,
     type: () => 'COMMAND_UNDONE',
-    reason: null,
+    reasons: { override: null, rework: null },
     judge: async (view, { floor }, tx) => {
       const [last] = await tx
         .select()

@@ -3,7 +3,7 @@ import pg from 'pg';
 import { pino } from 'pino';
 import { startServer, type RunningServer } from '#server/server';
 import { parseSecrets, type Settings } from '#server/settings/settings';
-import { migratedDatabase } from '../database';
+import { migratedDatabase, type TestDatabase } from '../database';
 import { TEST_SECRET } from '../test-settings.mjs';
 import { Caller } from './caller';
 
@@ -22,9 +22,19 @@ export interface ApiServer {
 
 let addresses = 0;
 
+/** What a test may bring along instead of a database of the server's own and the real clock. */
+export interface Around {
+  /** Whoever made it drops it. */
+  database?: TestDatabase;
+  now?: () => Date;
+}
+
 /** Starts what `npm start` starts, without the demo shop. What it logs as an error is thrown away: tests provoke errors. */
-export async function startApiServer(more: Partial<Settings> = {}): Promise<ApiServer> {
-  const database = await migratedDatabase();
+export async function startApiServer(
+  more: Partial<Settings> = {},
+  around: Around = {},
+): Promise<ApiServer> {
+  const database = around.database ?? (await migratedDatabase());
   const settings: Settings = {
     port: 0,
     host: '127.0.0.1',
@@ -40,7 +50,7 @@ export async function startApiServer(more: Partial<Settings> = {}): Promise<ApiS
     ...more,
   };
   const log = pino({ level: 'silent' });
-  const running = await startServer({ settings, log, now: () => new Date() });
+  const running = await startServer({ settings, log, now: around.now ?? (() => new Date()) });
   const admin = new pg.Pool({ connectionString: database.adminUrl, max: 3 });
   admin.on('error', () => undefined);
   const url = `http://127.0.0.1:${running.port}`;
@@ -53,7 +63,7 @@ export async function startApiServer(more: Partial<Settings> = {}): Promise<ApiS
     stop: async () => {
       await running.stop();
       await admin.end();
-      await database.drop();
+      if (!around.database) await database.drop();
     },
   };
 }

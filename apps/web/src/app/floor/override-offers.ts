@@ -24,6 +24,13 @@ export function overridesOf(
   const together = new Map<string, { next: WorkStep; pieces: number[]; holds: Hold[] }>();
   for (const hold of holds) {
     const at = stepAt(batch.route, hold.step);
+    // In clamps and curing at once: the clamps come first, and the glue goes on curing.
+    const isLater = holds.some((other) => {
+      const before = stepAt(batch.route, other.step);
+      const isSamePiece = before?.step.scope === at?.step.scope && other.piece === hold.piece;
+      return isSamePiece && (before?.index ?? 0) < (at?.index ?? 0);
+    });
+    if (isLater) continue;
     const next = batch.route.steps.slice((at?.index ?? 0) + 1).find((step) => step.kind === 'WORK');
     if (!at || next?.kind !== 'WORK') continue;
     const pieces = relatedPieces(batch, next.scope, at.step.scope, hold.piece).slice(0, 1);

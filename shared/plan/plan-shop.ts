@@ -1,11 +1,12 @@
-import { buildProblem, type PlanInput } from './build';
+import { buildProblem } from './build';
 import { checkPlan, type Violation } from './check/check';
 import { forecasts, type Forecast } from './forecast';
 import { planForward } from './forward';
-import type { Plan } from './model';
-import { reasonSentence, unplannedSentence } from './reason-words';
+import type { MissedMaximum } from './model';
+import type { PlanInput } from './plan-input';
+import { ReasonWords } from './reason-words';
 
-export type { PlanInput } from './build';
+export type { PlanInput } from './plan-input';
 
 /** A planned step as it is kept; instants in milliseconds. */
 export interface ShopPlanStep {
@@ -18,43 +19,38 @@ export interface ShopPlanStep {
   reason: string | null;
 }
 
+/** Plain data, as JSON would carry it. */
 export interface PlanResult {
+  /** Those that have not ended, by start. */
   steps: ShopPlanStep[];
   unplanned: { batchId: string; reason: string }[];
   forecasts: Forecast[];
-  missedMaxima: Plan['missedMaxima'];
+  missedMaxima: MissedMaximum[];
   /** Rules that the plan breaks. A plan with any is a fault of the planner and is not kept. */
   violations: Violation[];
 }
 
-/** Plans a shop and checks the plan. Same input, same result. */
+/** Plans a shop and checks the plan: a pure function, for a worker thread. Same input, same result. */
 export function planShop(input: PlanInput): PlanResult {
   const problem = buildProblem(input);
   const plan = planForward(problem);
-  const activities = new Map(problem.activities.map((activity) => [activity.id, activity]));
-  const steps = plan.placements.flatMap((placement): ShopPlanStep[] => {
-    const activity = activities.get(placement.activity);
-    if (!activity || activity.isEnd) return [];
-    return [
-      {
-        batchId: activity.batchId,
-        step: activity.step,
-        piece: activity.piece,
-        startAt: placement.start,
-        endAt: placement.end,
-        members: placement.people,
-        reason: reasonSentence(placement, input),
-      },
-    ];
-  });
+  const words = new ReasonWords(input);
   return {
-    steps,
+    steps: plan.placements.map((placement) => ({
+      batchId: placement.batchId,
+      step: placement.step,
+      piece: placement.piece,
+      startAt: placement.start,
+      endAt: placement.end,
+      members: [...placement.people],
+      reason: words.reason(placement.batchId, placement.reason),
+    })),
     unplanned: plan.unplanned.map(({ batchId, reason }) => ({
       batchId,
-      reason: unplannedSentence(reason),
+      reason: words.unplanned(batchId, reason),
     })),
-    forecasts: forecasts(problem, plan, input.hours),
-    missedMaxima: plan.missedMaxima,
+    forecasts: [...forecasts(problem, plan, input.hours).values()],
+    missedMaxima: [...plan.missedMaxima],
     violations: checkPlan(problem, plan),
   };
 }

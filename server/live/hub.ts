@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import type { Logger } from 'pino';
 import type { Doors } from '#server/db/doors';
+import { endable } from './endable';
 import { FeedQueue } from './feed-queue';
 import { currentSeq, projectEvents, RESET_AFTER, type ShopMessage } from './project';
 import { Wire } from './wire';
@@ -83,23 +84,14 @@ export class Hub {
    * A shop's messages after a place in its stream (null: from now on), each event once and in order. Whoever is more
    * than a thousand events behind, or ahead of what there is, gets a reset.
    */
-  async *follow(
-    shopId: string,
-    after: number | null,
-  ): AsyncGenerator<ShopMessage, void, undefined> {
-    const feed = this.feedOf(shopId);
+  follow(shopId: string, after: number | null): AsyncGenerator<ShopMessage, void, undefined> {
     const queue = new FeedQueue();
-    feed.queues.add(queue);
-    try {
-      await feed.ready;
-      queue.since = feed.seq;
-      if (after !== null && after !== feed.seq)
-        yield await this.catchUp(shopId, after, queue.since);
-      yield* queue.drain(() => this.resetMessage(shopId, feed.seq));
-    } finally {
-      feed.queues.delete(queue);
-      if (feed.queues.size === 0) this.feeds.delete(shopId);
-    }
+    return endable(this.messages(shopId, after, queue), () => queue.end());
+  }
+
+  /** How many shops this process follows. */
+  get followed(): number {
+    return this.feeds.size;
   }
 
   async close(): Promise<void> {
@@ -114,6 +106,36 @@ export class Hub {
     for (const listener of this.wakings) listener();
   }
 
+  private async *messages(
+    shopId: string,
+    after: number | null,
+    queue: FeedQueue,
+  ): AsyncGenerator<ShopMessage, void, undefined> {
+    const feed = this.feedOf(shopId);
+    feed.queues.add(queue);
+    try {
+      await feed.ready;
+      queue.since = feed.seq;
+      if (after !== null && after > feed.seq) {
+        // Told by another process of what this one has not read yet, or of what there never was.
+        const seq = await currentSeq(this.doors, shopId);
+        queue.since = Math.min(after, seq);
+        if (after > seq) yield this.resetMessage(shopId, seq);
+      } else if (after !== null && after < feed.seq) {
+        yield await this.catchUp(shopId, after, queue.since);
+      }
+      yield* queue.drain(() => this.resetMessage(shopId, feed.seq));
+    } finally {
+      feed.queues.delete(queue);
+      if (feed.queues.size === 0) this.forget(shopId, feed);
+    }
+  }
+
+  /** A shop may have a new feed by the time the last follower of the old one is gone. */
+  private forget(shopId: string, feed: Feed): void {
+    if (this.feeds.get(shopId) === feed) this.feeds.delete(shopId);
+  }
+
   private feedOf(shopId: string): Feed {
     const known = this.feeds.get(shopId);
     if (known) return known;
@@ -121,13 +143,13 @@ export class Hub {
     feed.ready = currentSeq(this.doors, shopId).then((seq) => {
       feed.seq = seq;
     });
-    feed.ready.catch(() => this.feeds.delete(shopId));
+    feed.ready.catch(() => this.forget(shopId, feed));
     this.feeds.set(shopId, feed);
     return feed;
   }
 
   private async catchUp(shopId: string, after: number, upTo: number): Promise<ShopMessage> {
-    if (after > upTo || upTo - after > RESET_AFTER) return this.resetMessage(shopId, upTo);
+    if (upTo - after > RESET_AFTER) return this.resetMessage(shopId, upTo);
     const message = await projectEvents(this.doors, shopId, after, upTo, this.now());
     return message ?? this.resetMessage(shopId, upTo);
   }
@@ -169,17 +191,24 @@ export class Hub {
       [shops],
     );
     for (const { shop_id: shopId, seq } of rows) {
-      const feed = this.feeds.get(shopId);
-      if (!feed) continue;
-      await feed.ready;
-      if (seq <= feed.seq) continue;
-      const message =
-        seq - feed.seq > RESET_AFTER
-          ? this.resetMessage(shopId, seq)
-          : await projectEvents(this.doors, shopId, feed.seq, seq, this.now());
-      feed.seq = seq;
-      for (const queue of feed.queues) queue.push(message ?? this.resetMessage(shopId, seq));
+      // What cannot be read in one shop keeps no other shop waiting; the poll tries it again.
+      await this.readShop(shopId, seq).catch((error: unknown) =>
+        this.log.warn({ error, shopId }, 'the events of a shop were not read; trying again'),
+      );
     }
+  }
+
+  private async readShop(shopId: string, seq: number): Promise<void> {
+    const feed = this.feeds.get(shopId);
+    if (!feed) return;
+    await feed.ready;
+    if (seq <= feed.seq) return;
+    const message =
+      seq - feed.seq > RESET_AFTER
+        ? this.resetMessage(shopId, seq)
+        : await projectEvents(this.doors, shopId, feed.seq, seq, this.now());
+    feed.seq = seq;
+    for (const queue of feed.queues) queue.push(message ?? this.resetMessage(shopId, seq));
   }
 
   private tellRevoked(credential: string): void {

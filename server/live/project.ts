@@ -54,6 +54,8 @@ export function projectEvents(
       if (type === 'PLAN_MADE') {
         for (const id of (data as { batchIds?: string[] }).batchIds ?? []) ids.add(id);
       }
+      // Not an event of the batch, which would keep its last command from being undone.
+      if (type === 'OVERRIDE_SEEN') ids.add((data as { batchId: string }).batchId);
     }
     const loaded = ids.size > 0 ? await loadBatches(tx, { ids: [...ids] }, now) : [];
     return {

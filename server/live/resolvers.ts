@@ -1,8 +1,10 @@
+import { setTimeout as pause } from 'node:timers/promises';
 import { GraphQLError } from 'graphql';
 import type { Resolvers, FloorChange } from '#server/generated/schema';
 import { globalId } from '#server/http/global-id';
 import type { Context } from '#server/http/context';
 import { fromCursor, toCursor } from './cursor';
+import { endable } from './endable';
 import type { ShopMessage } from './project';
 
 const HEARTBEAT_MS = 10_000;
@@ -45,9 +47,18 @@ function presentMessage(message: ShopMessage, context: Context): FloorChange {
   };
 }
 
-async function* beats(context: Context): AsyncGenerator<{ heartbeat: string }, void, undefined> {
-  for (;;) {
+interface Beat {
+  heartbeat: string;
+}
+
+function beats(context: Context): AsyncGenerator<Beat, void, undefined> {
+  const ended = new AbortController();
+  return endable(beat(context, ended.signal), () => ended.abort());
+}
+
+async function* beat(context: Context, ended: AbortSignal): AsyncGenerator<Beat, void, undefined> {
+  while (!ended.aborted) {
     yield { heartbeat: context.services.now().toISOString() };
-    await new Promise((resolve) => setTimeout(resolve, HEARTBEAT_MS).unref());
+    await pause(HEARTBEAT_MS, undefined, { ref: false, signal: ended }).catch(() => undefined);
   }
 }

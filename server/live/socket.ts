@@ -51,6 +51,7 @@ export function serveSockets(
     if (!isOwnOrigin(request, services.settings)) return refuse('403 Forbidden');
     sockets.handleUpgrade(request, stream, head, (socket) => {
       socket.on('error', () => socket.terminate());
+      socket.on('close', () => open.delete(socket));
       sockets.emit('connection', socket, request);
     });
   });
@@ -66,7 +67,8 @@ export function serveSockets(
           authorization: typeof given === 'string' ? given : null,
         };
         const principal = await principalOf(services, extra.credentials);
-        if (!principal) return false;
+        // Who hung up meanwhile is not counted: nobody would say goodbye for it.
+        if (!principal || extra.socket.readyState !== extra.socket.OPEN) return false;
         const mine = [...open.values()].filter(
           (other) => other.principal?.credential === principal.credential,
         );
@@ -101,9 +103,6 @@ export function serveSockets(
       onError: (_context, _id, _payload, errors) => errors.map(hideInternals),
       onNext: (_context, _id, _payload, _args, result) =>
         result.errors ? { ...result, errors: result.errors.map(hideInternals) } : result,
-      onDisconnect: ({ extra }) => {
-        open.delete(extra.socket);
-      },
     },
     sockets,
   );

@@ -5,6 +5,7 @@ import {
   type ExecutionResult,
 } from 'graphql';
 import type { Context } from '#server/http/context';
+import { endable } from './endable';
 
 /** Results by message, then by what was asked: many screens ask the same of the same message. */
 const results = new WeakMap<object, Map<string, ExecutionResult>>();
@@ -20,7 +21,11 @@ export async function subscribeOnce(
 ): Promise<AsyncGenerator<ExecutionResult, void, void> | ExecutionResult> {
   const source = await createSourceEventStream(args);
   if (!(Symbol.asyncIterator in source)) return source;
-  return mapped(source, args, questionOf(args));
+  const messages = source[Symbol.asyncIterator]();
+  return endable(mapped(source, args, questionOf(args)), () => {
+    // Whatever it fails with, whoever waits for the next message is told.
+    void messages.return?.().catch(() => undefined);
+  });
 }
 
 async function* mapped(

@@ -90,6 +90,10 @@ export class Wire {
     client.on('notification', ({ channel, payload = '' }) => this.heard(channel, payload));
     try {
       await client.connect();
+      if (this.closed) {
+        await client.end();
+        return;
+      }
       await client.query(`listen ${EVENTS}; listen ${REVOKED}; listen ${WATCHERS}`);
       this.client = client;
       attempt = 0;

@@ -13,39 +13,46 @@ interface Waiting {
   timer: NodeJS.Timeout;
 }
 
+/** A thread and who waits for its answers: one that ends takes no one along who asked its successor. */
+interface Thread {
+  thread: Worker;
+  waiting: Map<number, Waiting>;
+}
+
 /** Plans in a thread of its own, so that no request waits for it. A thread that dies is replaced at the next plan. */
 export class Planner {
-  private worker: Worker | null = null;
-  private readonly waiting = new Map<number, Waiting>();
+  private worker: Thread | null = null;
   private count = 0;
 
   plan(input: PlanInput): Promise<PlanResult> {
-    const worker = this.ready();
+    const { thread, waiting } = this.ready();
     const id = this.count++;
     return new Promise((resolve, reject) => {
       const timer = setTimeout(() => {
-        this.waiting.delete(id);
+        waiting.delete(id);
         reject(new Error('The planner did not answer in time.'));
-        void worker.terminate();
+        void thread.terminate();
       }, TIMEOUT_MS);
-      this.waiting.set(id, { resolve, reject, timer });
-      worker.postMessage({ id, input });
+      waiting.set(id, { resolve, reject, timer });
+      thread.postMessage({ id, input });
     });
   }
 
   async stop(): Promise<void> {
-    await this.worker?.terminate();
+    await this.worker?.thread.terminate();
   }
 
-  private ready(): Worker {
+  private ready(): Thread {
     if (this.worker) return this.worker;
-    const worker = startThread();
-    worker.on(
+    const thread = startThread();
+    const waiting = new Map<number, Waiting>();
+    const worker = { thread, waiting };
+    thread.on(
       'message',
       ({ id, result, error }: { id: number; result?: PlanResult; error?: string }) => {
-        const asked = this.waiting.get(id);
+        const asked = waiting.get(id);
         if (!asked) return;
-        this.waiting.delete(id);
+        waiting.delete(id);
         clearTimeout(asked.timer);
         if (result) asked.resolve(result);
         else asked.reject(new Error(error ?? 'The planner failed.'));
@@ -53,24 +60,25 @@ export class Planner {
     );
     const gone = (error: Error) => {
       if (this.worker === worker) this.worker = null;
-      for (const [id, asked] of this.waiting) {
+      for (const asked of waiting.values()) {
         clearTimeout(asked.timer);
-        this.waiting.delete(id);
         asked.reject(error);
       }
+      waiting.clear();
     };
-    worker.on('error', gone);
-    worker.on('exit', () => gone(new Error('The planner ended.')));
-    worker.unref();
+    thread.on('error', gone);
+    thread.on('exit', () => gone(new Error('The planner ended.')));
+    thread.unref();
     this.worker = worker;
     return worker;
   }
 }
 
-/** The thread's program: bundled beside the server, or the source through tsx in development and tests. */
+/** The thread's program: bundled beside the server, or from source in development and tests. */
 function startThread(): Worker {
   const here = path.dirname(fileURLToPath(import.meta.url));
   const bundled = path.join(here, 'plan-worker.mjs');
   if (existsSync(bundled)) return new Worker(bundled);
-  return new Worker(path.join(here, 'plan-worker.ts'), { execArgv: ['--import', 'tsx'] });
+  // Flags of the main thread, such as a test runner's, are none of its business.
+  return new Worker(path.join(here, 'plan-worker-source.mjs'), { execArgv: [] });
 }

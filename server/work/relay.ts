@@ -37,8 +37,7 @@ export class Relay {
     clearInterval(this.timer);
     this.unhook();
     await this.running?.catch(() => undefined);
-    this.leader?.release(true);
-    this.leader = null;
+    if (this.leader) this.resign(this.leader);
   }
 
   private turn(): void {
@@ -50,8 +49,7 @@ export class Relay {
     this.running = this.relay()
       .catch((error: unknown) => {
         this.services.log.warn({ error }, 'relaying events failed; trying again');
-        this.leader?.release(true);
-        this.leader = null;
+        if (this.leader) this.resign(this.leader);
       })
       .finally(() => {
         this.running = null;
@@ -86,19 +84,31 @@ export class Relay {
   private async lead(): Promise<pg.PoolClient | null> {
     if (this.leader) return this.leader;
     const client = await this.services.doors.relay.connect();
-    const { rows } = await client.query<{ mine: boolean }>(
-      'select pg_try_advisory_lock($1) as mine',
-      [RELAY_LOCK],
-    );
-    if (!rows[0]?.mine) {
+    let mine: boolean;
+    try {
+      const { rows } = await client.query<{ mine: boolean }>(
+        'select pg_try_advisory_lock($1) as mine',
+        [RELAY_LOCK],
+      );
+      mine = rows[0]?.mine === true;
+    } catch (error) {
+      client.release(true);
+      throw error;
+    }
+    if (!mine) {
       client.release();
       return null;
     }
-    client.on('error', () => {
-      if (this.leader === client) this.leader = null;
-    });
+    client.once('error', () => this.resign(client));
     this.leader = client;
     return client;
+  }
+
+  /** Gives the lock up with its connection. A broken one goes back too: the pool would count it as in use for ever. */
+  private resign(client: pg.PoolClient): void {
+    if (this.leader !== client) return;
+    this.leader = null;
+    client.release(true);
   }
 }
 

@@ -25,13 +25,13 @@ export async function startWork(services: Services): Promise<RunningWork> {
     logger,
     taskList: { plan: planTask(services, planner) },
   });
-  const watch = await watchWorkers(services, runner);
+  const watch = watchWorkers(services, runner);
   const relay = new Relay(services);
   return {
     stop: async () => {
       await relay.stop();
       await runner.stop();
-      await watch.stop();
+      watch.stop();
       await planner.stop();
     },
   };

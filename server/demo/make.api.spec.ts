@@ -103,4 +103,38 @@ describe('the demo shop', () => {
     await prepareDemo(services);
     expect((await demo()).shop_id).toBe(moved.shop_id);
   });
+
+  it('is made anew where a start was interrupted half-way', async () => {
+    const whole = await demo();
+    // The shop and its people are there, and nothing else: what was to follow came to nothing.
+    const broken = {
+      ...services,
+      doors: {
+        ...doors,
+        inShop: async (shopId, work) => {
+          if (++made > 1) throw new Error('The power is gone.');
+          return doors.inShop(shopId, work);
+        },
+      } satisfies Doors as Doors,
+    };
+    let made = 0;
+    services.settings.demoFresh = true;
+    await expect(prepareDemo(broken)).rejects.toThrow('The power is gone.');
+    // This time it ends before people have become members.
+    await expect(prepareDemo(broken)).rejects.toThrow('The power is gone.');
+    services.settings.demoFresh = false;
+    const half = await demo();
+    expect(half.shop_id).not.toBe(whole.shop_id);
+    await prepareDemo(services);
+    const again = await demo();
+    expect(again.shop_id).not.toBe(half.shop_id);
+    const people = await doors.readShop(again.shop_id, (tx) =>
+      tx.execute('select name from member order by name'),
+    );
+    expect(people.rows).toHaveLength(4);
+    const loaded = await doors.readShop(again.shop_id, (tx) => loadBatches(tx, 'OPEN', now));
+    expect(loaded.length).toBeGreaterThanOrEqual(14);
+    await prepareDemo(services);
+    expect((await demo()).shop_id).toBe(again.shop_id);
+  });
 });

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import { eq } from 'drizzle-orm';
 import { batch, board, occupation, stepRun } from '#drizzle/tables/batch';
 import { design } from '#drizzle/tables/design';
@@ -57,7 +58,7 @@ export async function makeDemo(services: Services, now: Date): Promise<void> {
   const people = [DEMO_OWNER, ...DEMO_OTHERS].map((person) => ({
     ...person,
     memberId: newId(now.getTime()),
-    personId: newId(now.getTime()),
+    personId: demoPersonId(person.email),
   }));
   const today = toLocal(HOURS.zone, now.getTime()).date;
   const designs = designRows(shopId);
@@ -85,6 +86,18 @@ export async function makeDemo(services: Services, now: Date): Promise<void> {
     await makeReadings(tx, shopId, now);
   });
   services.hub.wake();
+}
+
+/**
+ * Always the same for an address (uuidv8, RFC 9562): people who were made by a start that was interrupted before they
+ * became members belong to no shop that could be removed with them, and are found again.
+ */
+function demoPersonId(email: string): string {
+  const bytes = createHash('sha256').update(`demo person ${email}`).digest().subarray(0, 16);
+  bytes[6] = ((bytes[6] ?? 0) & 0x0f) | 0x80;
+  bytes[8] = ((bytes[8] ?? 0) & 0x3f) | 0x80;
+  const hex = bytes.toString('hex');
+  return hex.replace(/^(.{8})(.{4})(.{4})(.{4})(.{12})$/, '$1-$2-$3-$4-$5');
 }
 
 type DemoDesignRow = ReturnType<typeof designRows>[number];

@@ -1,3 +1,4 @@
+import { event } from '#drizzle/tables/event';
 import { HOUR_MS } from '#shared/time/instant';
 import type { Services } from '#server/http/services';
 import { DEMO_OTHERS, DEMO_OWNER, DEMO_PASSWORD } from './cast';
@@ -21,12 +22,13 @@ export async function prepareDemo(services: Services): Promise<string[]> {
     const [known] = await doors.entry<{ shop_id: string; made_at: Date; untouched: boolean }>(
       'select * from entry.demo_shop()',
     );
-    const stale =
-      known !== undefined && known.untouched && now.getTime() - known.made_at.getTime() > STALE_MS;
-    if (known && (stale || settings.demoFresh)) {
-      await doors.entry('select entry.remove_demo($1)', [known.shop_id]);
-    }
-    if (!known || stale || settings.demoFresh) await makeDemo(services, now);
+    const keep =
+      known !== undefined &&
+      !settings.demoFresh &&
+      !(known.untouched && now.getTime() - known.made_at.getTime() > STALE_MS) &&
+      (await isFinished(services, known.shop_id));
+    if (known && !keep) await doors.entry('select entry.remove_demo($1)', [known.shop_id]);
+    if (!keep) await makeDemo(services, now);
   } finally {
     await lock.query('select pg_advisory_unlock($1)', [DEMO_LOCK]).catch(() => undefined);
     lock.release();
@@ -40,4 +42,12 @@ export async function prepareDemo(services: Services): Promise<string[]> {
         `  ${email.padEnd(widest)}  ${DEMO_PASSWORD}  (${roles.join(', ').toLowerCase()})`,
     ),
   ];
+}
+
+/** The shop and its people are made first, everything else with the events in one transaction after that. */
+async function isFinished({ doors }: Services, shopId: string): Promise<boolean> {
+  return doors.readShop(shopId, async (tx) => {
+    const [any] = await tx.select({ seq: event.seq }).from(event).limit(1);
+    return any !== undefined;
+  });
 }

@@ -1,3 +1,4 @@
+import { inspect } from 'node:util';
 import { pino } from 'pino';
 import { startServer } from './server';
 import { parseSettings, SettingsError } from './settings/settings';
@@ -38,8 +39,7 @@ main().catch((error: unknown) => {
     process.stderr.write(`${error.message}\n`);
     process.exit(EXIT_SETUP);
   }
-  process.stderr.write(
-    `${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`,
-  );
+  // With its causes: a query that fails says only there why.
+  process.stderr.write(`${inspect(error)}\n`);
   process.exit(1);
 });

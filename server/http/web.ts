@@ -33,7 +33,8 @@ export function serveWeb(app: Express, folder: string): void {
       return;
     }
     response.setHeader('Cache-Control', 'no-cache');
-    response.sendFile(page);
+    // From the folder: a path above it may have names with a dot, which are not served.
+    response.sendFile('index.html', { root: folder });
   });
   app.use((_request, response) => {
     response.status(404).type('text/plain').send('There is nothing here.');

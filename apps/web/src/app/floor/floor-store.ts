@@ -86,7 +86,7 @@ export class FloorStore {
       this.aroundNow.set(toSurroundings(data.floor));
       this.readAtNow.set(Date.parse(data.floor.now));
       this.failureNow.set(null);
-      this.feed.resumeAt(data.floor.cursor);
+      this.feed.resumeAt(data.floor.cursor, data.floor.watchers);
     } catch (error) {
       if (read === this.reads) this.failureNow.set(failureSentence(error));
     }

@@ -89,6 +89,13 @@ export class Hub {
     return endable(this.messages(shopId, after, queue), () => queue.end());
   }
 
+  /** How many subscriptions this process serves, over all shops. */
+  get subscriptions(): number {
+    let sum = 0;
+    for (const feed of this.feeds.values()) sum += feed.queues.size;
+    return sum;
+  }
+
   /** How many shops this process follows. */
   get followed(): number {
     return this.feeds.size;

@@ -18,6 +18,10 @@ interface EventData {
   boards?: number;
 }
 
+function assigneeOf({ changes }: EventData): string | null {
+  return changes?.fields.assignedTo?.after ?? null;
+}
+
 /** What happened to a batch, the newest first. */
 export function batchHistory(
   context: Context,
@@ -53,6 +57,17 @@ export function batchHistory(
             (row) => [row.id, row.reason],
           ),
     );
+    const given = page.flatMap((row) => assigneeOf(row.event.data as EventData) ?? []);
+    const assignees = new Map(
+      given.length === 0
+        ? []
+        : (
+            await tx
+              .select({ id: member.id, name: member.name })
+              .from(member)
+              .where(inArray(member.id, given))
+          ).map((row) => [row.id, row.name]),
+    );
     const nodes = page.map(({ event: row, name }) => {
       const data = row.data as EventData;
       return {
@@ -69,6 +84,7 @@ export function batchHistory(
           to: data.to ?? null,
           boards: data.boards ?? null,
           reason: data.reasonId ? (reasons.get(data.reasonId) ?? null) : null,
+          assigneeName: assignees.get(assigneeOf(data) ?? '') ?? null,
         }),
       };
     });

@@ -1,6 +1,7 @@
 import type { FloorChangeSet } from '#shared/floor/model';
 import type { HoldKind, Place, RouteStep, StepScope } from '#shared/route/route';
 import { holdWords, pieceName, placeWords } from './card-words';
+import { piecesName } from './command-words';
 
 /** What the sentence of a batch's event is made from. */
 export interface BatchEventFacts {
@@ -12,6 +13,8 @@ export interface BatchEventFacts {
   to: Place | null;
   boards: number | null;
   reason: string | null;
+  /** Whom it was given to, where that is known. */
+  assigneeName?: string | null;
 }
 
 /** What happened to a batch, in words. */
@@ -23,7 +26,7 @@ export function batchEventSentence(facts: BatchEventFacts): string {
   const place = facts.to ? placeWords(facts.to) : 'another stage';
   switch (facts.type) {
     case 'BATCH_MADE':
-      return `${who} made the batch${facts.boards === null ? '' : ` of ${facts.boards} boards`}.`;
+      return `${who} made the batch${facts.boards === null ? '' : ` of ${boardsWords(facts.boards)}`}.`;
     case 'STEP_STARTED':
       return `${who} started ${workWords(facts)}${overriding}.`;
     case 'STEP_FINISHED':
@@ -31,9 +34,9 @@ export function batchEventSentence(facts: BatchEventFacts): string {
     case 'BATCH_MOVED':
       return `${who} moved it to ${place}${overriding}.`;
     case 'BATCH_REWORKED':
-      return `${who} sent it back to ${place}${because}.`;
+      return `${who} sent it back to ${place}${overriding}${because}.`;
     case 'BATCH_ASSIGNED':
-      return `${who} gave it to someone else.`;
+      return `${who} ${assignedWords(facts)}.`;
     case 'COMMAND_UNDONE':
       return `${who} took the last command back.`;
     default:
@@ -56,17 +59,21 @@ export function overrideSentence(facts: {
   return `${facts.personName ?? 'Someone'} overrode a hold on ${what}${state}: “${facts.reason}”`;
 }
 
+function boardsWords(boards: number): string {
+  return boards === 1 ? '1 board' : `${boards} boards`;
+}
+
+function assignedWords({ changes, assigneeName }: BatchEventFacts): string {
+  if (changes?.fields.assignedTo?.after === null) return 'gave it to no one';
+  return assigneeName ? `gave it to ${assigneeName}` : 'gave it to someone else';
+}
+
 /** "glue-up on panels 1 and 2". */
 function workWords({ changes, steps }: BatchEventFacts): string {
   const runs = changes?.runs.filter((run) => run.after?.startedAt != null) ?? [];
   const step = steps.find((candidate) => candidate.key === runs[0]?.step);
   if (!step) return 'a step';
-  if (step.scope === 'BATCH') return step.name;
-  const noun = step.scope === 'PANEL' ? 'panel' : 'block';
   const pieces = runs.filter((run) => run.step === step.key).map((run) => run.piece);
-  const list =
-    pieces.length === 1
-      ? `${noun} ${pieces[0]}`
-      : `${noun}s ${pieces.slice(0, -1).join(', ')} and ${pieces.at(-1)}`;
-  return `${step.name} on ${list}`;
+  const on = piecesName(step.scope, pieces);
+  return on === '' ? step.name : `${step.name} on ${on}`;
 }

@@ -1,4 +1,5 @@
-import type { Holder, PieceKind, Refusal } from '#shared/floor/refusal';
+import { MAKER_BACKDATE_MINUTES } from '#shared/floor/happened';
+import type { PieceKind, Refusal } from '#shared/floor/refusal';
 import type { HoldKind } from '#shared/route/route';
 import type { Instant } from '#shared/time/instant';
 import { clockWords, durationWords } from '#shared/time/words';
@@ -36,7 +37,7 @@ export function refusalSentence(refusal: Refusal, context: RefusalContext): stri
     case 'STEP_UNKNOWN':
       return `The route of ${batchCode} has no work called “${refusal.step}”.`;
     case 'PIECE_UNKNOWN':
-      return `${batchCode} has pieces 1 to ${refusal.pieces} for ${refusal.step}; there is no ${refusal.piece}.`;
+      return `${batchCode} has ${refusal.pieces === 1 ? '1 piece' : `${refusal.pieces} pieces`} for ${refusal.step}, and none with the number ${refusal.piece}.`;
     case 'PIECES_EMPTY':
       return 'Say which panel or block it is.';
     case 'ALREADY_STARTED':
@@ -46,7 +47,7 @@ export function refusalSentence(refusal: Refusal, context: RefusalContext): stri
     case 'NOT_STARTED':
       return `${subject(refusal, batchCode)}: ${refusal.stepName} was not started. Start it first.`;
     case 'STEP_BEFORE':
-      return `${subject(refusal, batchCode)} comes to ${refusal.stepName} after ${refusal.beforeName}. Finish that first.`;
+      return stepBefore(refusal, batchCode);
     case 'HOLD_RUNNING':
       return (
         `${subject(refusal, batchCode)} is ${holdWords(refusal.kind)} until ${clock(refusal.clearAt)}. ` +
@@ -58,19 +59,15 @@ export function refusalSentence(refusal: Refusal, context: RefusalContext): stri
         `${durationWords(refusal.minMinutes)} ${holdWords(refusal.kind)}. Do ${refusal.beforeName} first.`
       );
     case 'STATION_FULL':
-      return (
-        `The ${refusal.station} is full: it takes ${refusal.capacity}, ${refusal.free} free, ${refusal.need} needed.` +
-        freeWords(refusal.holder, clock)
-      );
+      return stationFull(refusal, batchCode) + freeWords(refusal, context);
     case 'CLAMPS_FULL':
-      return refusal.owned < refusal.need
-        ? `${batchCode} needs ${refusal.need} clamps long enough; the shop has ${refusal.owned}.`
-        : `${batchCode} needs ${refusal.need} clamps long enough; ${refusal.free} are free.` +
-            freeWords(refusal.holder, clock);
+      return clampsFull(refusal, batchCode) + freeWords(refusal, context);
     case 'IN_THE_FUTURE':
       return 'This is later than now. Say when it happened.';
     case 'TOO_LONG_AGO':
-      return `You can say what happened up to ${durationWords(refusal.minutes)} ago. Ask a maker to record it.`;
+      return refusal.minutes < MAKER_BACKDATE_MINUTES
+        ? `You can say what happened up to ${durationWords(refusal.minutes)} ago. Ask a maker to record it.`
+        : `You can say what happened up to ${durationWords(refusal.minutes)} ago. Say it as of then.`;
     case 'BEFORE_THE_FACT_BEFORE':
       return `What comes before it was at ${clock(refusal.earliest)}. It cannot have happened earlier.`;
     case 'REASON_MISSING':
@@ -93,9 +90,7 @@ export function refusalSentence(refusal: Refusal, context: RefusalContext): stri
 /** "Panel 2 of CT-014", or the batch itself. */
 function subject(on: { piece: number; pieceKind: PieceKind }, batchCode: string): string {
   const piece = pieceName(on.pieceKind, on.piece);
-  return piece === ''
-    ? batchCode
-    : `${piece.charAt(0).toUpperCase()}${piece.slice(1)} of ${batchCode}`;
+  return piece === '' ? batchCode : `${capital(piece)} of ${batchCode}`;
 }
 
 function needWords(
@@ -123,9 +118,54 @@ function needWords(
   }
 }
 
-function freeWords(holder: Holder | null, clock: (at: Instant) => string): string {
-  if (!holder) return '';
-  return holder.freeAt === null
-    ? ` ${holder.batchCode} has it.`
-    : ` ${holder.batchCode} should give it back first, at about ${clock(holder.freeAt)}.`;
+/** "Slicing comes after flattening of panel 2 of CT-014." */
+function stepBefore(refusal: Extract<Refusal, { code: 'STEP_BEFORE' }>, batchCode: string): string {
+  const { stepName, beforeName } = refusal;
+  const piece = pieceName(refusal.pieceKind, refusal.piece);
+  const of = piece === '' ? batchCode : `${piece} of ${batchCode}`;
+  // Both glue-ups have one name.
+  const what = stepName === beforeName ? 'The next' : capital(stepName);
+  return `${what} comes after ${beforeName} of ${of}. Finish that first.`;
+}
+
+function stationFull(
+  refusal: Extract<Refusal, { code: 'STATION_FULL' }>,
+  batchCode: string,
+): string {
+  const { station, capacity, need, free } = refusal;
+  if (need > capacity) {
+    return `The ${station} takes ${capacity} at once, and ${batchCode} needs ${need}. Start fewer at once, or make more room.`;
+  }
+  if (free === 0) return `The ${station} is full (${capacity} of ${capacity}).`;
+  return `The ${station} has room for ${free} more, and ${batchCode} needs ${need}.`;
+}
+
+function clampsFull(refusal: Extract<Refusal, { code: 'CLAMPS_FULL' }>, batchCode: string): string {
+  const { need, free, owned } = refusal;
+  const needs = `${batchCode} needs ${need} clamps that are long enough`;
+  if (owned < need) {
+    return `${needs}, and the shop has ${owned}. Start fewer pieces at once, or add clamps.`;
+  }
+  return `${needs}, and ${free === 0 ? 'none is' : free === 1 ? '1 is' : `${free} are`} free.`;
+}
+
+/** Who gives room first; nothing where no waiting would help. */
+function freeWords(
+  refusal: Extract<Refusal, { code: 'STATION_FULL' | 'CLAMPS_FULL' }>,
+  { zone, now }: RefusalContext,
+): string {
+  const most = refusal.code === 'STATION_FULL' ? refusal.capacity : refusal.owned;
+  const { holder } = refusal;
+  if (!holder || refusal.need > most) return '';
+  const { batchCode, freeAt } = holder;
+  const them = refusal.code === 'STATION_FULL' ? 'it' : 'some';
+  if (freeAt === null) return ` ${batchCode} has ${them}.`;
+  const at = clockWords(zone, now, freeAt);
+  return freeAt <= now
+    ? ` ${batchCode} had ${them} until ${at}.`
+    : ` ${batchCode} should free ${them} first, at ${at} at the earliest.`;
+}
+
+function capital(text: string): string {
+  return `${text.charAt(0).toUpperCase()}${text.slice(1)}`;
 }

@@ -24,7 +24,7 @@ try {
   const [name = '', value = ''] = cookie.split('=');
   for (const [page, wanted, signedIn] of [
     ['/sign-in', 'form', false],
-    ['/floor', 'app-board-card, [data-card]', true],
+    ['/floor', '[data-part=card]', true],
   ] as const) {
     const context = await browser.newContext();
     if (signedIn) await context.addCookies([{ name, value, url: server.url }]);

@@ -15,7 +15,10 @@ import { spread } from './quantiles';
  */
 
 const MOVES = 40;
-const PAUSE_MS = 350;
+/** Moves before the counting begins: the first ones find nothing compiled. */
+const WARM_UP = 5;
+/** Between two moves, so that the plan that follows each is made before the next: people do not move twice a second. */
+const PAUSE_MS = 1_000;
 /** Sockets that one session may have. */
 const EACH = 50;
 
@@ -161,10 +164,12 @@ async function measure(
   const browser = withBrowser ? await openBrowser(server.url, mover.cookie) : null;
   const sentAt = new Map<string, number>();
   let { version, place } = batch;
-  for (let move = 0; move < MOVES; move++) {
+  for (let move = -WARM_UP; move < MOVES; move++) {
     const to: string = place === 'QUEUED' ? 'BLANK' : 'QUEUED';
-    watch.send(version + 1);
-    sentAt.set(`${batch.id} ${version + 1}`, Date.now());
+    if (move >= 0) {
+      watch.send(version + 1);
+      sentAt.set(`${batch.id} ${version + 1}`, Date.now());
+    }
     const { moveBatch } = await mover.ask<{
       moveBatch: { batch: { version: number; place: string }; problems: { sentence: string }[] };
     }>(
@@ -175,7 +180,7 @@ async function measure(
     );
     if (moveBatch.problems.length > 0) throw new Error(moveBatch.problems[0]?.sentence);
     ({ version, place } = moveBatch.batch);
-    for (let wait = 0; wait < 100 && watch.count(version) < sockets; wait++) {
+    for (let wait = 0; wait < 100 && move >= 0 && watch.count(version) < sockets; wait++) {
       await new Promise((resolve) => setTimeout(resolve, 20));
     }
     await new Promise((resolve) => setTimeout(resolve, PAUSE_MS));

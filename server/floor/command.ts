@@ -30,6 +30,8 @@ export interface FloorCommandRequest {
   type: (changes: FloorChangeSet) => FloorEventType;
   /** When it is said to have happened; null for now. */
   happenedAt: number | null;
+  /** Whether it also matters what was occupied before then, as for taking back what gave something back. */
+  looksBack?: true;
   /** Reasons that go with it, kept out of the event. Read once the rules have let it pass. */
   reasons: { override: string | null; rework: string | null };
   judge(view: FloorView, loaded: LoadedBatch, tx: ShopTransaction): Verdict | Promise<Verdict>;
@@ -57,8 +59,9 @@ export async function runFloorCommand(
       sql`select pg_advisory_xact_lock(hashtextextended(${`floor ${principal.shopId}`}, 0))`,
     );
     const now = services.now();
-    const from = (request.happenedAt ?? now.getTime()) - 1;
-    const lookBack = Math.max(from, now.getTime() - LOOK_BACK_MS);
+    const farthest = now.getTime() - LOOK_BACK_MS;
+    const from = request.looksBack ? farthest : (request.happenedAt ?? now.getTime()) - 1;
+    const lookBack = Math.max(from, farthest);
     const ids = [...new Set([batchId, ...(await batchesThatHold(tx, lookBack))])];
     const loaded = await loadBatches(tx, { ids }, now, lookBack);
     const target = loaded.find((candidate) => candidate.floor.id === batchId);

@@ -19,6 +19,7 @@ export function undoCommand(
     batchId,
     version: null,
     happenedAt: null,
+    looksBack: true,
     type: () => 'COMMAND_UNDONE',
     reasons: { override: null, rework: null },
     judge: async (view, { floor }, tx) => {

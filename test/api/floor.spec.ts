@@ -255,7 +255,7 @@ describe('an override', () => {
       ]),
     );
     expect((await history(owner.caller, batch))[0]?.sentence).toBe(
-      'Member MAKER sent it back to Blank: “The saw is free now”.',
+      'Member MAKER sent it back to Blank, overriding 4 holds: “The saw is free now”.',
     );
   });
 
@@ -289,6 +289,21 @@ describe('an undo', () => {
     });
     const twice = await undo(helper.caller, started, undone.event);
     expect(twice.problems).toMatchObject([{ code: 'UNDO_BUILT_ON' }]);
+  });
+
+  it('is refused when another batch had meanwhile what the command gave back', async () => {
+    const milling = await done(start(helper.caller, batch, 'mill', [0]));
+    clock.pass(30);
+    const milled = await done(finish(helper.caller, milling, 'mill', [0]));
+    let other = await done(makeBatch(owner.caller, { designId, boards: 4 }));
+    clock.pass(1);
+    other = await done(start(maker.caller, other, 'mill', [0]));
+    clock.pass(2);
+    await done(finish(maker.caller, other, 'mill', [0]));
+    clock.pass(1);
+    // The planer is free again, but both would have been on it a minute ago.
+    const undone = await undo(helper.caller, milled, milled.undo?.event ?? null);
+    expect(undone.problems).toMatchObject([{ code: 'UNDO_BUILT_ON' }]);
   });
 
   it('takes back what somebody else did only for makers', async () => {

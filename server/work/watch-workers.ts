@@ -1,4 +1,3 @@
-import type { Runner } from 'graphile-worker';
 import type pg from 'pg';
 import type { Services } from '#server/http/services';
 
@@ -9,16 +8,11 @@ const WORKER_LOCK = 7_301_104;
 const GRACE_SECONDS = 2;
 
 /**
- * Each process holds an advisory lock for its worker, which the database lets go when the process dies. The others look
- * for workers that have jobs and no lock, and release those jobs, so that a plan is tried again within ten seconds.
+ * Each process holds an advisory lock for its worker (the queue's pool, in whose name jobs are locked), which the database
+ * lets go when the process dies. The others look for workers that have jobs and no lock, and release those jobs, so that a
+ * plan is tried again within ten seconds.
  */
-export function watchWorkers(services: Services, runner: Runner): { stop(): void } {
-  const watch = new WorkerWatch(services);
-  runner.events.on('worker:getJob:start', ({ worker }) => watch.holdLockOf(worker.workerId));
-  return watch;
-}
-
-class WorkerWatch {
+export class WorkerWatch {
   private client: pg.PoolClient | null = null;
   private connecting: Promise<pg.PoolClient> | null = null;
   private stopped = false;
@@ -26,8 +20,11 @@ class WorkerWatch {
   private readonly mine = new Set<string>();
   private readonly timer: NodeJS.Timeout;
 
-  constructor(private readonly services: Services) {
-    this.timer = setInterval(() => this.logged(this.sweep()), SWEEP_MS);
+  constructor(
+    private readonly services: Pick<Services, 'doors' | 'log'>,
+    sweepMs = SWEEP_MS,
+  ) {
+    this.timer = setInterval(() => this.logged(this.sweep()), sweepMs);
     this.timer.unref();
   }
 
@@ -37,6 +34,13 @@ class WorkerWatch {
     const held = this.client;
     // A connection that is being made takes the locks of all workers that are known by then.
     this.logged(held ? lock(held, workerId) : this.connection());
+  }
+
+  /** This process's worker is gone: whatever it left behind is free. */
+  letGoOf(workerId: string): void {
+    this.mine.delete(workerId);
+    // A connection that is lost meanwhile lets go by itself.
+    if (this.client) this.logged(unlock(this.client, workerId));
   }
 
   stop(): void {
@@ -60,7 +64,7 @@ class WorkerWatch {
       );
       if (!got[0]?.dead) continue;
       await client.query('select graphile_worker.force_unlock_workers($1)', [[workerId]]);
-      await client.query('select pg_advisory_unlock($1, hashtext($2))', [WORKER_LOCK, workerId]);
+      await unlock(client, workerId);
     }
   }
 
@@ -91,6 +95,8 @@ class WorkerWatch {
     if (this.client !== client) return;
     this.client = null;
     client.release(true);
+    // At once, not at the next sweep: meanwhile others take this process's workers for dead.
+    if (!this.stopped) this.logged(this.connection());
   }
 
   private logged(work: Promise<unknown>): void {
@@ -103,4 +109,8 @@ class WorkerWatch {
 
 async function lock(client: pg.PoolClient, workerId: string): Promise<void> {
   await client.query('select pg_advisory_lock($1, hashtext($2))', [WORKER_LOCK, workerId]);
+}
+
+async function unlock(client: pg.PoolClient, workerId: string): Promise<void> {
+  await client.query('select pg_advisory_unlock($1, hashtext($2))', [WORKER_LOCK, workerId]);
 }

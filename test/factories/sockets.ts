@@ -1,3 +1,4 @@
+import { once } from 'node:events';
 import { createClient } from 'graphql-ws';
 import WebSocket from 'ws';
 import type { ApiServer } from './api-server';
@@ -65,4 +66,23 @@ export function subscribe(
 
 function codeOf(error: { message: string; extensions?: Record<string, unknown> }): string {
   return String(error.extensions?.['code'] ?? error.message);
+}
+
+/** A socket that said who it is and was let in, and asks for nothing. */
+export async function openSocket(
+  server: Pick<ApiServer, 'url'>,
+  { cookieHeader, bearer }: Caller,
+): Promise<{ closed: Promise<number> }> {
+  const socket = new WebSocket(
+    `${server.url.replace('http', 'ws')}/graphql`,
+    'graphql-transport-ws',
+    { headers: cookieHeader ? { Cookie: cookieHeader } : {} },
+  );
+  socket.on('error', () => undefined);
+  const closed = new Promise<number>((resolve) => socket.on('close', resolve));
+  await once(socket, 'open');
+  const payload = bearer ? { authorization: `Bearer ${bearer}` } : {};
+  socket.send(JSON.stringify({ type: 'connection_init', payload }));
+  await once(socket, 'message');
+  return { closed };
 }

@@ -80,6 +80,25 @@ export function doneBefore(batch: FloorBatch, step: string, at: Instant): FloorB
   return { ...batch, releasedAt: at, runs };
 }
 
+/** The batch with all work before a step done and all waits waited for, so that the step can start at an instant. */
+export function readyFor(batch: FloorBatch, step: string, at: Instant): FloorBatch {
+  const end = stepAt(batch.route, step)?.index;
+  if (end === undefined) throw new Error(`The route has no ${step}.`);
+  const doneAfter = new Map<string, number>();
+  let time = 0;
+  for (const before of batch.route.steps.slice(0, end)) {
+    if (before.kind === 'WORK') doneAfter.set(before.key, time);
+    else time = Math.max(time, (doneAfter.get(before.after) ?? 0) + minutes(before.minMinutes));
+  }
+  const begun = at - time;
+  const runs = batch.route.steps.slice(0, end).flatMap((before) => {
+    if (before.kind === 'WAIT') return [];
+    const done = begun + (doneAfter.get(before.key) ?? 0);
+    return piecesOf(batch, before.scope).map((piece) => aRun(before.key, piece, done));
+  });
+  return { ...batch, releasedAt: begun, runs };
+}
+
 /** A floor on which commands are given one after another, as on a working day. */
 export class WorkingFloor {
   now: Instant = NOW;

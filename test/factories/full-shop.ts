@@ -3,6 +3,7 @@ import { newId } from '#server/db/uuid';
 import type { ApiServer } from './api-server';
 import { newClient, newOwner, newScreen, type Person } from './people';
 import { newBatch, newDesign, newOrder, tryMove, type Batch, type Order } from './things';
+import { until } from './until';
 
 /** A shop that has at least one row in every table, and the API's ids of what is in it. */
 export interface FullShop {
@@ -42,6 +43,12 @@ export async function fullShop(server: ApiServer, shopName: string): Promise<Ful
   const overrideId = newId();
   const batchId = localId('batch', batch.id);
   const memberId = localId('member', owner.memberId);
+  // The planner brings the plan, the forecast and the relay's cursor, and takes away what it did not bring.
+  await until(
+    'the batch has a forecast',
+    () => server.admin.query('select from forecast where batch_id = $1', [batchId]),
+    ({ rowCount }) => rowCount === 1,
+  );
   const insert = (text: string, ...values: unknown[]) => server.admin.query(text, [id, ...values]);
   await insert(
     `insert into hold_override (shop_id, id, batch_id, step, piece, by, at, reason)
@@ -69,16 +76,6 @@ export async function fullShop(server: ApiServer, shopName: string): Promise<Ful
     `insert into reading (shop_id, id, at, temperature_tenths_c) values ($1, $2, now(), 190)`,
     newId(),
   );
-  await insert(
-    `insert into plan (shop_id, version, made_at, seq, steps, unplanned)
-     values ($1, 1000000, now(), 1, '[]', '[]')`,
-  );
-  await insert(
-    `insert into forecast (shop_id, batch_id, plan_version, ready_at) values ($1, $2, 1000000, now())
-     on conflict do nothing`,
-    batchId,
-  );
-  await insert(`insert into relay_cursor (shop_id, seq) values ($1, 0) on conflict do nothing`);
   const { screens, apiKeys, sessions } = await caller.get<
     Record<'screens' | 'apiKeys' | 'sessions', { id: string }[]>
   >('{ screens { id } apiKeys { id } sessions { id } }');

@@ -64,12 +64,10 @@ export class FloorPage {
     const button = this.card(code).locator('[data-part=act]').filter({ hasText: words });
     await button.click();
     const menu = this.page.getByRole('menu');
-    if (await menu.isVisible())
-      await menu
-        .getByRole('menuitem')
-        .filter({ hasText: /all \d+/ })
-        .first()
-        .click();
+    if (await menu.isVisible()) {
+      // All pieces at once stand last.
+      await menu.getByRole('menuitem').last().click();
+    }
   }
 
   async choose(code: string, item: RegExp): Promise<void> {

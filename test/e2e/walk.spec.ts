@@ -46,13 +46,15 @@ describe('a batch moves through the shop', () => {
     await display.page.goto('/screen');
     const shown = display.page.locator('.code');
     await shown.waitFor();
-    const digits = (await shown.locator('span').allTextContents()).join('').replace(/\W/g, '');
+    const digits = (await shown.locator('[aria-hidden=true]').allTextContents())
+      .join('')
+      .replace(/\W/g, '');
     await owner.page.goto('/settings/screens');
     await owner.page.getByLabel('Code on the display').fill(digits);
     await owner.page.getByLabel('Name').fill('glue bench');
     await owner.page.getByRole('button', { name: 'Pair it' }).click();
-    await display.page.getByText('Hands off until').waitFor();
     await owner.page.getByText('glue bench').first().waitFor();
+    await display.page.getByText('Hands off until').waitFor();
   });
 
   it('an order is entered, and a maker makes a batch for it', async () => {

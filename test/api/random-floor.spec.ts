@@ -31,7 +31,7 @@ import { newDesign } from '../factories/things';
  */
 
 const deep = process.env['DEEP'] === '1';
-const ROUNDS = deep ? 2_000 : 60;
+const ROUNDS = deep ? 2_000 : 50;
 const SEED = 20261202;
 
 const clock = new TestClock(Date.parse('2026-12-01T08:00:00Z'));
